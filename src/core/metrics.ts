@@ -11,6 +11,8 @@ export interface RowMetrics {
   readonly southM: Float64Array;
   /** Area of one cell, `height` values. */
   readonly areaM2: Float64Array;
+  /** The largest of these areas. */
+  readonly areaBoundM2: number;
 }
 
 /** Metrics of a projected grid: every cell is `cellWidthM × cellHeightM`. */
@@ -20,6 +22,7 @@ export function projectedMetrics(height: number, cellWidthM: number, cellHeightM
     eastM: new Float64Array(height).fill(cellWidthM),
     southM: new Float64Array(height).fill(cellHeightM),
     areaM2: new Float64Array(height).fill(cellWidthM * cellHeightM),
+    areaBoundM2: cellWidthM * cellHeightM,
   };
 }
 
@@ -71,7 +74,7 @@ export function geographicMetrics(
     southM[row] = ((a * (1 - e2)) / (w * w * w)) * heightRad;
     areaM2[row] = ((b * b * widthRad) / 2) * (q(top) - q(top - cellHeightDeg));
   }
-  return { uniform: false, eastM, southM, areaM2 };
+  return { uniform: false, eastM, southM, areaM2, areaBoundM2: areaM2.reduce((most, area) => Math.max(most, area), 0) };
 }
 
 function clamped(latitudeDeg: number): number {

@@ -1,0 +1,46 @@
+import { OverbrimError } from './error.ts';
+import type { Grid, Neighbours } from './grid.ts';
+import { joinTiles } from './join-tiles.ts';
+import type { Survey } from './survey.ts';
+import { surveyTile, tileRoom, type TileSurvey } from './tile-survey.ts';
+import { shapeOf, tilesOf, tileWindow } from './tile-window.ts';
+
+export interface SurveyOptions {
+  readonly neighbours?: Neighbours;
+  /** Side of a tile in cells, 1 to 512; changes no result. */
+  readonly tileSize?: number;
+  /** Row-major cells that become pits of their own, ascending: inlets, drains, pumps, cells of an outlet reach. */
+  readonly madePits?: ArrayLike<number>;
+  /** Called after each tile with the share of tiles done; may throw to stop the survey. */
+  readonly progress?: (done: number) => void;
+  /** Order in which tiles are done, positions in `tilesOf(…)`; changes no result. */
+  readonly tileOrder?: readonly number[];
+}
+
+/** Largest side of a tile: its candidates must fit the sort key (see tile-sills.ts). */
+export const largestTile = 512;
+const usualTile = 256;
+
+/**
+ * Surveys a grid tile by tile. The same grid, neighbours and made pits give the same bits for any tile size and
+ * order.
+ * @throws OverbrimError `bad-input` when the tile size is out of range.
+ */
+export function surveyOf(grid: Grid, options: SurveyOptions = {}): Survey {
+  const size = options.tileSize ?? usualTile;
+  if (!(Number.isInteger(size) && size >= 1 && size <= largestTile)) {
+    throw new OverbrimError('bad-input', `The tile size is ${size}; expected a whole number of cells from 1 to ${largestTile}.`);
+  }
+  const neighbours = options.neighbours ?? 8;
+  const madePits = options.madePits ?? [];
+  const tiles = tilesOf(grid.width, grid.height, size);
+  const room = tileRoom(Math.min(size, Math.max(grid.width, grid.height)));
+  const done: TileSurvey[] = new Array(tiles.length);
+  const order = options.tileOrder ?? tiles.map((_, i) => i);
+  order.forEach((t, i) => {
+    done[t] = surveyTile(tileWindow(grid, tiles[t], neighbours, madePits), room);
+    options.progress?.((i + 1) / tiles.length);
+  });
+  return joinTiles(shapeOf(grid), grid.metrics, neighbours, madePits, size, done);
+}
+
