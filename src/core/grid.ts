@@ -15,7 +15,7 @@ export interface Grid {
 
 /** How the four sides of a grid meet the rest of the world. */
 export interface Frame {
-  /** First and last column are neighbours (a grid that spans 360° of longitude). */
+  /** First and last column are neighbours (a grid that spans 360° of longitude, of at least 3 columns). */
   readonly wraps: boolean;
   /** `beyond`: the data ends here · `pole`: the side is the pole itself, nothing lies beyond · `pole-row`: the row's cells lie exactly on the pole and are one place. */
   readonly north: Side;
@@ -58,6 +58,9 @@ export function gridOf(
       'bad-input',
       `Metrics of ${metrics.areaM2.length} rows were given for a grid of ${height} rows; make them for the same grid.`,
     );
+  }
+  if (frame.wraps && width < 3) {
+    throw new OverbrimError('bad-input', `A grid of ${width} columns is said to wrap around; expected at least 3 columns, so give it as a plain frame.`);
   }
   let voids = 0;
   for (let i = 0; i < elevationM.length; i++) {

@@ -29,4 +29,4 @@ export { shortestWay } from './shortest-way.ts';
 export { type SpillLeg, type SpillPath, spillPath } from './spill-path.ts';
 export { noPond, spillsInto } from './spills-into.ts';
 export { type Survey, viewSurvey } from './survey.ts';
-export { largestTile, type SurveyOptions, surveyOf } from './survey-grid.ts';
+export { largestTile, type SurveyOptions, surveyOf, surveySteps } from './survey-grid.ts';

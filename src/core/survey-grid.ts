@@ -11,8 +11,6 @@ export interface SurveyOptions {
   readonly tileSize?: number;
   /** Row-major cells that become pits of their own, ascending: inlets, drains, pumps, cells of an outlet reach. */
   readonly madePits?: ArrayLike<number>;
-  /** Called after each tile with the share of tiles done; may throw to stop the survey. */
-  readonly progress?: (done: number) => void;
   /** Order in which tiles are done, positions in `tilesOf(…)`; changes no result. */
   readonly tileOrder?: readonly number[];
 }
@@ -27,6 +25,15 @@ const usualTile = 256;
  * @throws OverbrimError `bad-input` when the tile size is out of range.
  */
 export function surveyOf(grid: Grid, options: SurveyOptions = {}): Survey {
+  const steps = surveySteps(grid, options);
+  for (;;) {
+    const step = steps.next();
+    if (step.done) return step.value;
+  }
+}
+
+/** The same in steps of one tile, for callers that must breathe: yields the share of tiles done, returns the survey. */
+export function* surveySteps(grid: Grid, options: SurveyOptions = {}): Generator<number, Survey> {
   const size = options.tileSize ?? usualTile;
   if (!(Number.isInteger(size) && size >= 1 && size <= largestTile)) {
     throw new OverbrimError('bad-input', `The tile size is ${size}; expected a whole number of cells from 1 to ${largestTile}.`);
@@ -37,10 +44,9 @@ export function surveyOf(grid: Grid, options: SurveyOptions = {}): Survey {
   const room = tileRoom(Math.min(size, Math.max(grid.width, grid.height)));
   const done: TileSurvey[] = new Array(tiles.length);
   const order = options.tileOrder ?? tiles.map((_, i) => i);
-  order.forEach((t, i) => {
-    done[t] = surveyTile(tileWindow(grid, tiles[t], neighbours, madePits), room);
-    options.progress?.((i + 1) / tiles.length);
-  });
+  for (let i = 0; i < order.length; i++) {
+    done[order[i]] = surveyTile(tileWindow(grid, tiles[order[i]], neighbours, madePits), room);
+    yield (i + 1) / tiles.length;
+  }
   return joinTiles(shapeOf(grid), grid.metrics, neighbours, madePits, size, done);
 }
-

@@ -1,0 +1,15 @@
+export { checkedInputs } from './check-inputs.ts';
+export {
+  type InputDescription,
+  isList,
+  isRequired,
+  type Json,
+  type JsonSchema,
+  mediaTypeOf,
+  type OutputDescription,
+  type ProcessDescription,
+} from './description.ts';
+export { Job, type JobOptions, type JobProgress, type JobResult, type JobStatus } from './job.ts';
+export { type Lineage, lineageOf, type Software } from './lineage.ts';
+export type { Inputs, JobContext, OutputBody, Process } from './process.ts';
+export { Registry } from './registry.ts';
