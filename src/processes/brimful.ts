@@ -1,0 +1,110 @@
+import {
+  type Depressions,
+  depressionsOf,
+  type Drainage,
+  drainageOf,
+  type Grid,
+  type Neighbours,
+  OverbrimError,
+  outletPits,
+  type OutletRules,
+  outletSills,
+  type PondMeasures,
+  pondMeasures,
+  type Survey,
+} from '../core/index.ts';
+import type { Inputs, JobContext } from '../host/index.ts';
+import type { Terrain, VerticalUnit } from '../raster/terrain.ts';
+import {
+  addOutlet,
+  addOutletFeatures,
+  deepestCell,
+  type OutletLevels,
+  sortedOutlets,
+} from './outlet-cells.ts';
+import type { TerrainStore } from './terrain-store.ts';
+import { isTypedPlace, typedCell } from './typed-place.ts';
+
+/** A terrain with every depression filled to its brim. */
+export interface Brimful {
+  readonly terrain: Terrain;
+  readonly grid: Grid;
+  readonly survey: Survey;
+  readonly drainage: Drainage;
+  readonly depressions: Depressions;
+  readonly measures: PondMeasures;
+}
+
+/**
+ * Reads the terrain, surveys it and fills it to the brim, by the inputs of terrain-inputs.ts.
+ * @throws OverbrimError `no-outlet` when no water can leave anywhere; and what reading and outlets throw.
+ */
+export async function brimful(inputs: Inputs, context: JobContext, store: TerrainStore): Promise<Brimful> {
+  const references = inputs.terrain as readonly string[];
+  const terrain = await store.terrain(references, inputs.verticalUnit as VerticalUnit | undefined, context);
+  recordTerrain(terrain, context);
+  const { grid } = terrain;
+  const rules = await outletRules(inputs, terrain, store);
+  const neighbours = inputs.neighbours as Neighbours;
+  const survey = await store.survey(terrain, neighbours, outletPits(grid, rules.cells), context);
+  await context.breathe();
+  const outlets = outletSills(grid, survey, rules);
+  if (outlets.elevationM.length === 0) {
+    throw new OverbrimError('no-outlet', `The terrain has no outlet: edges are ${rules.edges}${grid.frame.wraps ? ' and the grid wraps around the globe' : ''}, voids are "${rules.voids}" and no outlet was named; open the edges or name an outlet, such as --outlets deepest.`);
+  }
+  context.progress(0.8, 'finding ponds');
+  await context.breathe();
+  const drainage = drainageOf(survey, outlets);
+  await context.breathe();
+  const depressions = depressionsOf(survey, drainage);
+  await context.breathe();
+  context.progress(0.85, 'measuring ponds');
+  const measures = pondMeasures(grid, survey, drainage, depressions);
+  await context.breathe();
+  noteLandlocked(survey, drainage, context);
+  return { terrain, grid, survey, drainage, depressions, measures };
+}
+
+async function outletRules(inputs: Inputs, terrain: Terrain, store: TerrainStore): Promise<OutletRules> {
+  const levels: OutletLevels = new Map();
+  let voids = inputs.voids as OutletRules['voids'];
+  for (const outlet of (inputs.outlets ?? []) as readonly string[]) {
+    if (outlet === 'voids') voids = 'all';
+    else if (outlet === 'deepest') addOutlet(levels, [deepestCell(terrain.grid)], Number.NEGATIVE_INFINITY);
+    else if (isTypedPlace(outlet)) {
+      const cell = await typedCell(terrain, 'outlets', outlet, inputs.crs as string | undefined);
+      addOutlet(levels, [cell], Number.NEGATIVE_INFINITY);
+    } else addOutletFeatures(levels, terrain, outlet, await store.text(outlet));
+  }
+  return { edges: inputs.edges as OutletRules['edges'], voids, cells: sortedOutlets(levels) };
+}
+
+function recordTerrain(terrain: Terrain, context: JobContext): void {
+  const { grid, georeference } = terrain;
+  context.record('terrain', {
+    sha256: terrain.sha256,
+    files: terrain.files.map(({ name, sha256 }) => ({ name, sha256 })),
+    width: grid.width,
+    height: grid.height,
+    crs: georeference.crs.name,
+    epsg: georeference.crs.epsg,
+    cellWidth: georeference.cellWidth,
+    cellHeight: georeference.cellHeight,
+    verticalUnit: terrain.verticalUnit,
+    verticalDatum: terrain.verticalDatum,
+  });
+  for (const { message } of terrain.notices) context.note(message);
+}
+
+function noteLandlocked(survey: Survey, drainage: Drainage, context: JobContext): void {
+  let cells = 0;
+  let leaves = 0;
+  drainage.levelM.forEach((level, leaf) => {
+    if (level !== Number.POSITIVE_INFINITY) return;
+    cells += survey.cells[leaf];
+    leaves++;
+  });
+  if (cells > 0) {
+    context.note(`${cells} cells in ${leaves} catchments have no way to any outlet, since voids or closed edges enclose them; they get no brim level and no pond.`);
+  }
+}

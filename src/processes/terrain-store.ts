@@ -1,0 +1,25 @@
+import type { Neighbours, Survey } from '../core/index.ts';
+import type { JobContext } from '../host/index.ts';
+import type { Terrain, VerticalUnit } from '../raster/terrain.ts';
+
+/**
+ * What the built-in processes borrow from the place where they run: terrains and their surveys, kept under handles
+ * so that no file is read and no terrain surveyed twice.
+ */
+export interface TerrainStore {
+  /** The terrain behind one reference (path or URL), or the mosaic of several. */
+  terrain(
+    references: readonly string[],
+    verticalUnit: VerticalUnit | undefined,
+    context: JobContext,
+  ): Promise<Terrain>;
+  /** Its survey; `madePits` are row-major cells, ascending. */
+  survey(
+    terrain: Terrain,
+    neighbours: Neighbours,
+    madePits: Float64Array,
+    context: JobContext,
+  ): Promise<Survey>;
+  /** A small text file behind a reference, such as outlets as GeoJSON. */
+  text(reference: string): Promise<string>;
+}
