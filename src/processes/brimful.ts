@@ -72,7 +72,7 @@ async function outletRules(inputs: Inputs, terrain: Terrain, store: TerrainStore
     if (outlet === 'voids') voids = 'all';
     else if (outlet === 'deepest') addOutlet(levels, [deepestCell(terrain.grid)], Number.NEGATIVE_INFINITY);
     else if (isTypedPlace(outlet)) {
-      const cell = await typedCell(terrain, 'outlets', outlet, inputs.crs as string | undefined);
+      const cell = await typedCell(terrain, 'outlets', outlet, inputs.crs as string | undefined, store);
       addOutlet(levels, [cell], Number.NEGATIVE_INFINITY);
     } else addOutletFeatures(levels, terrain, outlet, await store.text(outlet));
   }

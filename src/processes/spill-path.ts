@@ -48,7 +48,7 @@ export const spillPath: Process<TerrainStore> = {
     const analysis = await brimful(inputs, context, store);
     const { terrain, grid, survey, drainage, depressions } = analysis;
     const crs = inputs.crs as string | undefined;
-    const start = await typedCell(terrain, 'from', inputs.from as string, crs);
+    const start = await typedCell(terrain, 'from', inputs.from as string, crs, store);
     context.progress(0.9, 'tracing the path');
     await context.breathe();
     const path = coreSpillPath(grid, survey, drainage, depressions, start);

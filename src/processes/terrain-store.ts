@@ -1,6 +1,6 @@
 import type { Neighbours, Survey } from '../core/index.ts';
 import type { JobContext } from '../host/index.ts';
-import type { Terrain, VerticalUnit } from '../raster/terrain.ts';
+import type { Crs, Terrain, VerticalUnit } from '../raster/terrain.ts';
 
 /**
  * What the built-in processes borrow from the place where they run: terrains and their surveys, kept under handles
@@ -20,6 +20,8 @@ export interface TerrainStore {
     madePits: Float64Array,
     context: JobContext,
   ): Promise<Survey>;
+  /** A CRS by its EPSG code. */
+  crs(code: number): Promise<Crs>;
   /** A small text file behind a reference, such as outlets as GeoJSON. */
   text(reference: string): Promise<string>;
 }

@@ -1,8 +1,8 @@
 import { OverbrimError } from '../core/index.ts';
-import { crsFromEpsg } from '../raster/crs.ts';
 import { cellAtPoint } from '../raster/place.ts';
 import type { Terrain } from '../raster/terrain.ts';
 import { type Point, transformer } from '../raster/transform.ts';
+import type { TerrainStore } from './terrain-store.ts';
 
 const number = '[+-]?(?:\\d+\\.?\\d*|\\.\\d+)(?:[eE][+-]?\\d+)?';
 const pair = new RegExp(`^\\s*(${number})\\s*,\\s*(${number})\\s*$`);
@@ -21,6 +21,7 @@ export async function typedCell(
   name: string,
   text: string,
   crs: string | undefined,
+  store: Pick<TerrainStore, 'crs'>,
 ): Promise<number> {
   const match = pair.exec(text);
   if (match === null) {
@@ -28,7 +29,7 @@ export async function typedCell(
   }
   const typed: Point = [Number(match[1]), Number(match[2])];
   const { crs: own } = terrain.georeference;
-  const named = crs === undefined ? own : await crsFromEpsg(Number(crs.slice('EPSG:'.length)));
+  const named = crs === undefined ? own : await store.crs(Number(crs.slice('EPSG:'.length)));
   const point = crs === undefined ? typed : transformer(named, own)(...typed);
   const cell = cellAtPoint(terrain, point);
   if (cell < 0) {

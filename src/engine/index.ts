@@ -1,0 +1,2 @@
+export { builtInProcesses } from './built-in.ts';
+export { type Reach, TerrainShelf } from './terrain-shelf.ts';

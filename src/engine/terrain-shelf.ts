@@ -1,0 +1,105 @@
+import { type Neighbours, OverbrimError, type Survey, surveySteps } from '../core/index.ts';
+import type { JobContext } from '../host/index.ts';
+import type { TerrainStore } from '../processes/index.ts';
+import type { ByteSource } from '../raster/byte-source.ts';
+import { crsFromEpsg } from '../raster/crs.ts';
+import type { EpsgLookup } from '../raster/epsg.ts';
+import { openTerrain } from '../raster/open-terrain.ts';
+import type { Crs, Terrain, VerticalUnit } from '../raster/terrain.ts';
+
+/** How the place of running reaches files. */
+export interface Reach {
+  /** The bytes behind a path or URL. */
+  source(reference: string): Promise<ByteSource>;
+  readonly epsg?: EpsgLookup;
+}
+
+/** Shares of a job's work: reading takes the first, surveying the second. */
+const readingShare = 0.3;
+const surveyShare = 0.5;
+/** Text inputs are outlines and points; what is larger is some other file. */
+const mostTextBytes = 256 * 2 ** 20;
+
+/** Keeps terrains and surveys, so that a second question reads and surveys nothing again. */
+export class TerrainShelf implements TerrainStore {
+  readonly #reach: Reach;
+  readonly #terrains = new Map<string, Terrain>();
+  readonly #surveys = new WeakMap<Terrain, Map<string, Survey>>();
+
+  constructor(reach: Reach) {
+    this.#reach = reach;
+  }
+
+  async terrain(
+    references: readonly string[],
+    verticalUnit: VerticalUnit | undefined,
+    context: JobContext,
+  ): Promise<Terrain> {
+    const key = JSON.stringify([references, verticalUnit ?? null]);
+    const held = this.#terrains.get(key);
+    if (held !== undefined) return held;
+    context.progress(0, 'reading elevation');
+    const sources: ByteSource[] = [];
+    try {
+      for (const reference of references) sources.push(await this.#reach.source(reference));
+      const terrain = await openTerrain(sources, {
+        ...(verticalUnit === undefined ? {} : { verticalUnit }),
+        ...(this.#reach.epsg === undefined ? {} : { epsg: this.#reach.epsg }),
+        signal: context.signal,
+        progress: (done) => context.progress(readingShare * done, 'reading elevation'),
+      });
+      this.#terrains.set(key, terrain);
+      return terrain;
+    } catch (error) {
+      // What does not fit in a file is the file's fault, not that of the question.
+      if (error instanceof OverbrimError && error.code === 'bad-input') {
+        throw new OverbrimError('unreadable', error.message, { cause: error });
+      }
+      throw error;
+    } finally {
+      for (const source of sources) await source.close?.();
+    }
+  }
+
+  async survey(
+    terrain: Terrain,
+    neighbours: Neighbours,
+    madePits: Float64Array,
+    context: JobContext,
+  ): Promise<Survey> {
+    const held = this.#surveys.get(terrain) ?? new Map<string, Survey>();
+    this.#surveys.set(terrain, held);
+    const key = `${neighbours} ${madePits.join()}`;
+    const known = held.get(key);
+    if (known !== undefined) return known;
+    const steps = surveySteps(terrain.grid, { neighbours, madePits });
+    for (;;) {
+      const step = steps.next();
+      if (step.done) {
+        held.set(key, step.value);
+        return step.value;
+      }
+      context.progress(readingShare + surveyShare * step.value, 'surveying catchments');
+      await context.breathe();
+    }
+  }
+
+  crs(code: number): Promise<Crs> {
+    return crsFromEpsg(code, this.#reach.epsg);
+  }
+
+  async text(reference: string): Promise<string> {
+    const source = await this.#reach.source(reference);
+    try {
+      // A source of unknown size tells it with its first answer.
+      await source.read(0, 1);
+      const size = source.size ?? 0;
+      if (size > mostTextBytes) {
+        throw new OverbrimError('too-large', `${source.name} has ${size} bytes; expected a GeoJSON file of at most ${mostTextBytes}, so cut it to the terrain.`);
+      }
+      return new TextDecoder().decode(await source.read(0, size));
+    } finally {
+      await source.close?.();
+    }
+  }
+}

@@ -1,0 +1,122 @@
+import { createHash } from 'node:crypto';
+import { existsSync, mkdirSync, readdirSync, readFileSync, renameSync, rmSync, statSync } from 'node:fs';
+import { mkdir, open, rm } from 'node:fs/promises';
+import { dirname, join, resolve } from 'node:path';
+import { OverbrimError } from '../core/index.ts';
+import type { OutputBody } from '../host/index.ts';
+
+/** The file that makes a folder a result; it is the last to arrive. */
+export const resultFile = 'result.json';
+
+/** One file as written. */
+export interface WrittenFile {
+  readonly file: string;
+  readonly bytes: number;
+  readonly sha256: string;
+}
+
+/**
+ * A folder of results that appears whole or not at all: files are written into a hidden folder beside it and moved
+ * when all are there.
+ */
+export class ResultFolder {
+  readonly path: string;
+  readonly #partial: string;
+
+  /**
+   * @throws OverbrimError `bad-input` when the path is a file, or a folder that holds the result of another process.
+   */
+  constructor(path: string, processId: string) {
+    this.path = resolve(path);
+    this.#partial = join(dirname(this.path), `.${process.pid}-${Date.now()}.partial`);
+    if (!existsSync(this.path)) return;
+    if (!statSync(this.path).isDirectory()) {
+      throw new OverbrimError('bad-input', `${path} is a file; give a folder for the results with --out.`);
+    }
+    const other = processOfResult(join(this.path, resultFile));
+    if (other !== null && other !== processId) {
+      throw new OverbrimError('bad-input', `The folder ${path} holds results of ${other}; choose another folder for ${processId} with --out.`);
+    }
+  }
+
+  /** Writes one file; `stop` is asked between pieces and throws to end the writing. */
+  async write(file: string, body: OutputBody, stop: () => void): Promise<WrittenFile> {
+    await mkdir(this.#partial, { recursive: true });
+    const handle = await open(join(this.#partial, file), 'w');
+    const hash = createHash('sha256');
+    let bytes = 0;
+    try {
+      for (const piece of piecesOf(body)) {
+        stop();
+        const data = typeof piece === 'string' ? Buffer.from(piece) : piece;
+        hash.update(data);
+        bytes += data.length;
+        await handle.writeFile(data);
+      }
+    } catch (error) {
+      throw error instanceof OverbrimError ? error : notWritten(join(this.path, file), error);
+    } finally {
+      await handle.close();
+    }
+    return { file, bytes, sha256: hash.digest('hex') };
+  }
+
+  /** Moves everything into place; files of an earlier run of the same process are replaced, others stay. */
+  finish(): void {
+    try {
+      if (!existsSync(this.path)) {
+        mkdirSync(dirname(this.path), { recursive: true });
+        renameSync(this.#partial, this.path);
+        return;
+      }
+      rmSync(join(this.path, resultFile), { force: true });
+      const files = readdirSync(this.#partial).filter((file) => file !== resultFile);
+      for (const file of [...files, resultFile]) renameSync(join(this.#partial, file), join(this.path, file));
+      rmSync(this.#partial, { recursive: true });
+    } catch (error) {
+      throw notWritten(this.path, error);
+    }
+  }
+
+  /** Removes what was written so far. */
+  async discard(): Promise<void> {
+    await rm(this.#partial, { recursive: true, force: true });
+  }
+
+  /** The same at once, for the end of the process. */
+  discardNow(): void {
+    rmSync(this.#partial, { recursive: true, force: true });
+  }
+}
+
+/** Pieces are gathered, so that a feature a line does not cost a write a feature. */
+function* piecesOf(body: OutputBody): Generator<string | Uint8Array> {
+  if ('bytes' in body) yield body.bytes;
+  else if ('json' in body) yield `${JSON.stringify(body.json, null, 2)}\n`;
+  else {
+    let held = '';
+    for (const piece of body.text) {
+      held += piece;
+      if (held.length > 65536) {
+        yield held;
+        held = '';
+      }
+    }
+    yield held;
+  }
+}
+
+function processOfResult(path: string): string | null {
+  if (!existsSync(path)) return null;
+  try {
+    const id: unknown = JSON.parse(readFileSync(path, 'utf8'))?.process?.id;
+    return typeof id === 'string' ? id : 'something else';
+  } catch {
+    return 'something else';
+  }
+}
+
+function notWritten(path: string, cause: unknown): OverbrimError {
+  const why = cause instanceof Error ? cause.message : String(cause);
+  return new OverbrimError('failed', `${path} could not be written (${why}); check the folder, its permissions and the space on the disk.`, { cause });
+}
