@@ -43,14 +43,30 @@ export interface Georeference {
 /** One elevation file as read. */
 export interface TerrainFile {
   readonly name: string;
-  /** SHA-256 of the bytes read, hex. */
+  /** SHA-256, hex: of the file when all of it was read, else of the list of byte ranges read with their hashes. */
   readonly sha256: string;
+  readonly hashOf: 'file' | 'ranges';
 }
 
 /** Something about the terrain that its user should know, each a plain sentence. */
 export interface Notice {
-  readonly kind: 'gap' | 'seam-step' | 'overview' | 'window' | 'duplicate-column' | 'vertical-datum';
+  readonly kind:
+    | 'gap'
+    | 'seam-step'
+    | 'overview'
+    | 'window'
+    | 'duplicate-column'
+    | 'vertical-datum'
+    | 'datum-shift';
   readonly message: string;
+}
+
+/** A rectangle of cells. */
+export interface CellRect {
+  readonly column: number;
+  readonly row: number;
+  readonly width: number;
+  readonly height: number;
 }
 
 /** Elevation ready for a survey, with its place and its origin. */
@@ -64,6 +80,8 @@ export interface Terrain {
   /** SHA-256 over grid shape, georeference and elevations (float32 metres), hex: the same terrain whatever file it came in. */
   readonly sha256: string;
   readonly notices: readonly Notice[];
+  /** Gaps of up to 3 cells between the tiles of a mosaic, in cells of the grid; all void. Empty for one file. */
+  readonly gaps: readonly CellRect[];
   /** The file's last column repeated its first (360° + one cell); it was dropped and is restored on writing. */
   readonly droppedColumn: boolean;
 }
