@@ -62,7 +62,8 @@ export function depressionsOf(survey: Survey, drainage: Drainage): Depressions {
   const spills = (node: number, sill: number, into: number): void => {
     spillElevationM[node] = tree.elevationM[sill];
     leavingSill[node] = sill;
-    const beyond = node === nodeOfSet[sets.root(tree.sillLeaf[sill])] ? tree.otherLeaf[sill] : tree.sillLeaf[sill];
+    const beyond =
+      node === nodeOfSet[sets.root(tree.sillLeaf[sill])] ? tree.otherLeaf[sill] : tree.sillLeaf[sill];
     intoLeaf[node] = beyond === leaves ? outside : beyond;
     parent[node] = into;
     if (into !== none && isLower(pitLeaf[node], pitLeaf[into])) pitLeaf[into] = pitLeaf[node];
@@ -149,7 +150,8 @@ export function depressionsOf(survey: Survey, drainage: Drainage): Depressions {
  * the same elevation); ponds in ground without any way to an outlet have no spill elevation and are none.
  */
 function settleOutermost(depressions: Depressions, drainage: Drainage): void {
-  const { leaves, parent, pitElevationM, spillElevationM, pourSill, leavingSill, intoLeaf, isPond } = depressions;
+  const { leaves, parent, pitElevationM, spillElevationM, pourSill, leavingSill, intoLeaf, isPond } =
+    depressions;
   const outermost = outermostOf(parent);
   const { towards, levelM, sill } = drainage;
   const wetIn = (leaf: number): number => {

@@ -1,4 +1,4 @@
-import { emptySills, setSill, type Sills, spanningForest } from './forest.ts';
+import { emptySills, type Sills, setSill, spanningForest } from './forest.ts';
 import type { Survey } from './survey.ts';
 
 /** Instead of a leaf: the outside. */

@@ -11,6 +11,16 @@ export interface Grid {
   readonly elevationM: Float32Array;
   readonly metrics: RowMetrics;
   readonly frame: Frame;
+  /** Rectangles of voids that are narrow gaps between the files of a mosaic: walls unless declared open. */
+  readonly gaps: readonly CellRect[];
+}
+
+/** A rectangle of cells. */
+export interface CellRect {
+  readonly column: number;
+  readonly row: number;
+  readonly width: number;
+  readonly height: number;
 }
 
 /** How the four sides of a grid meet the rest of the world. */
@@ -40,6 +50,7 @@ export function gridOf(
   elevationM: Float32Array,
   metrics: RowMetrics,
   frame: Frame = plainFrame,
+  gaps: readonly CellRect[] = [],
 ): Grid {
   if (!(Number.isInteger(width) && Number.isInteger(height) && width > 0 && height > 0)) {
     throw new OverbrimError(
@@ -60,7 +71,10 @@ export function gridOf(
     );
   }
   if (frame.wraps && width < 3) {
-    throw new OverbrimError('bad-input', `A grid of ${width} columns is said to wrap around; expected at least 3 columns, so give it as a plain frame.`);
+    throw new OverbrimError(
+      'bad-input',
+      `A grid of ${width} columns is said to wrap around; expected at least 3 columns, so give it as a plain frame.`,
+    );
   }
   let voids = 0;
   for (let i = 0; i < elevationM.length; i++) {
@@ -80,5 +94,5 @@ export function gridOf(
       `All ${voids} cells are void; expected at least one elevation, so check the window and the no-data value.`,
     );
   }
-  return { width, height, elevationM, metrics, frame };
+  return { width, height, elevationM, metrics, frame, gaps };
 }

@@ -5,7 +5,15 @@ export { type Depressions, depressionsOf, outermostOf } from './depressions.ts';
 export { type Drainage, drainageOf, nowhere, outside } from './drainage.ts';
 export { type ErrorCode, OverbrimError } from './error.ts';
 export type { Sills } from './forest.ts';
-export { type Frame, type Grid, gridOf, type Neighbours, plainFrame, type Side } from './grid.ts';
+export {
+  type CellRect,
+  type Frame,
+  type Grid,
+  gridOf,
+  type Neighbours,
+  plainFrame,
+  type Side,
+} from './grid.ts';
 export {
   type Ellipsoid,
   geographicMetrics,

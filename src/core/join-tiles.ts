@@ -1,11 +1,11 @@
-import { emptySills, setSill, type Sills, spanningForest } from './forest.ts';
+import { emptySills, type Sills, setSill, spanningForest } from './forest.ts';
 import type { Neighbours } from './grid.ts';
+import { joinVoid } from './join-void.ts';
 import type { RowMetrics } from './metrics.ts';
 import { keyHalves, stableOrder } from './order.ts';
 import { allocateSurvey, type Survey, viewSurvey } from './survey.ts';
 import type { TileSurvey } from './tile-survey.ts';
 import type { GridShape } from './tile-window.ts';
-import { joinVoid } from './join-void.ts';
 
 /**
  * Joins tile surveys into one. Each tile's labels get a place in one numbering; a provisional label is redirected
@@ -28,7 +28,13 @@ export function joinTiles(
   const voids = joinVoid(tiles, starts, leafOf.leaf);
   const { buffer, sections } = allocateSurvey(
     { width: grid.width, height: grid.height, neighbours, wraps: grid.wraps, leaves: leafOf.count },
-    { madePits: madePits.length, sills: kept.length, rim: rim.length, voids: voids.onRim.length, beside: voids.beside.length },
+    {
+      madePits: madePits.length,
+      sills: kept.length,
+      rim: rim.length,
+      voids: voids.onRim.length,
+      beside: voids.beside.length,
+    },
   );
   sections.madePits.set(madePits);
   kept.forEach((at, i) => {
@@ -44,6 +50,7 @@ export function joinTiles(
     sections.rimElevationM[i] = elevationM;
   });
   sections.voidOnRim.set(voids.onRim);
+  sections.voidIsGap.set(voids.isGap);
   sections.voidCells.set(voids.cells);
   voids.beside.forEach(({ leaf, piece, cell, elevationM }, i) => {
     sections.besideLeaf[i] = leaf;

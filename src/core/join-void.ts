@@ -4,6 +4,7 @@ import { UnionFind } from './union-find.ts';
 /** Pieces of void of the whole grid, and where leaves touch them. */
 export interface JoinedVoid {
   readonly onRim: Uint8Array;
+  readonly isGap: Uint8Array;
   readonly cells: Float64Array;
   readonly beside: readonly { leaf: number; piece: number; cell: number; elevationM: number }[];
 }
@@ -29,11 +30,11 @@ export function joinVoid(tiles: readonly TileSurvey[], starts: Int32Array, leaf:
       else sets.join(sets.root(other), piece);
     });
   });
-  const roots = new Map<number, { first: number; onRim: number; cells: number }>();
+  const roots = new Map<number, { first: number; onRim: number; isGap: number; cells: number }>();
   tiles.forEach((tile, t) => {
     tile.voidFirstCell.forEach((first, p) => {
       const root = sets.root(firsts[t] + p);
-      const held = roots.get(root) ?? { first, onRim: 0, cells: 0 };
+      const held = roots.get(root) ?? { first, onRim: 0, isGap: tile.voidIsGap[p], cells: 0 };
       held.first = Math.min(held.first, first);
       held.onRim |= tile.voidOnRim[p];
       held.cells += tile.voidCells[p];
@@ -61,6 +62,7 @@ export function joinVoid(tiles: readonly TileSurvey[], starts: Int32Array, leaf:
   });
   return {
     onRim: Uint8Array.from(ordered, ([, piece]) => piece.onRim),
+    isGap: Uint8Array.from(ordered, ([, piece]) => piece.isGap),
     cells: Float64Array.from(ordered, ([, piece]) => piece.cells),
     beside: [...lowest.values()].sort((a, b) => a.leaf - b.leaf || a.piece - b.piece),
   };

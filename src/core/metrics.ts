@@ -74,7 +74,13 @@ export function geographicMetrics(
     southM[row] = ((a * (1 - e2)) / (w * w * w)) * heightRad;
     areaM2[row] = ((b * b * widthRad) / 2) * (q(top) - q(top - cellHeightDeg));
   }
-  return { uniform: false, eastM, southM, areaM2, areaBoundM2: areaM2.reduce((most, area) => Math.max(most, area), 0) };
+  return {
+    uniform: false,
+    eastM,
+    southM,
+    areaM2,
+    areaBoundM2: areaM2.reduce((most, area) => Math.max(most, area), 0),
+  };
 }
 
 function clamped(latitudeDeg: number): number {

@@ -1,4 +1,4 @@
-import { emptySills, setSill, type Sills } from './forest.ts';
+import { emptySills, type Sills, setSill } from './forest.ts';
 import type { Grid } from './grid.ts';
 import type { Survey } from './survey.ts';
 
@@ -8,6 +8,8 @@ export interface OutletRules {
   readonly edges: 'open' | 'closed';
   /** `rim`: pieces of void joined to the rim drain like the rim, enclosed ones are walls · `walls`: no piece drains · `all`: every piece drains. */
   readonly voids: 'rim' | 'walls' | 'all';
+  /** Narrow gaps between the files of a mosaic: walls, or open like an outlet. */
+  readonly gaps: 'walls' | 'open';
   readonly cells: OutletCells;
 }
 
@@ -19,8 +21,8 @@ export interface OutletCells {
 
 export const noOutletCells: OutletCells = { cell: new Float64Array(0), levelM: new Float32Array(0) };
 
-/** Open edges, void pieces on the rim, nothing named. */
-export const usualOutlets: OutletRules = { edges: 'open', voids: 'rim', cells: noOutletCells };
+/** Open edges, void pieces on the rim, gaps closed, nothing named. */
+export const usualOutlets: OutletRules = { edges: 'open', voids: 'rim', gaps: 'walls', cells: noOutletCells };
 
 /** The cell that stands for the outside in added sills. */
 export const outsideCell = -1;
@@ -37,7 +39,7 @@ export function outletSills(grid: Grid, survey: Survey, rules: OutletRules): Sil
     });
   }
   survey.besideLeaf.forEach((leaf, i) => {
-    if (!drains(rules, survey.voidOnRim[survey.besidePiece[i]] === 1)) return;
+    if (!drains(rules, survey, survey.besidePiece[i])) return;
     found.push({ leaf, cell: survey.besideCell[i], elevationM: survey.besideElevationM[i] });
   });
   const named = new Map<number, { leaf: number; cell: number; elevationM: number }>();
@@ -56,8 +58,10 @@ export function outletSills(grid: Grid, survey: Survey, rules: OutletRules): Sil
   return sills;
 }
 
-function drains(rules: OutletRules, onRim: boolean): boolean {
-  return rules.voids === 'all' || (rules.voids === 'rim' && rules.edges === 'open' && onRim);
+function drains({ edges, voids, gaps }: OutletRules, survey: Survey, piece: number): boolean {
+  if (voids === 'all') return true;
+  if (survey.voidIsGap[piece] === 1) return gaps === 'open';
+  return voids === 'rim' && edges === 'open' && survey.voidOnRim[piece] === 1;
 }
 
 /**

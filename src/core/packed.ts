@@ -61,11 +61,18 @@ export function allocatePacked<L extends Layout>(
  */
 export function viewPacked<L extends Layout>(buffer: ArrayBuffer, kind: number, layout: L): Sections<L> {
   const headBytes = (headWords + wordsPerSection * layout.length) * 4;
-  const words = new Uint32Array(buffer, 0, Math.min(headBytes, buffer.byteLength - (buffer.byteLength % 4)) / 4);
+  const words = new Uint32Array(
+    buffer,
+    0,
+    Math.min(headBytes, buffer.byteLength - (buffer.byteLength % 4)) / 4,
+  );
   const expected = [magic, version, kind, layout.length];
   if (buffer.byteLength < headBytes || expected.some((word, i) => words[i] !== word)) {
     const found = Array.from(words.slice(0, headWords)).join(', ');
-    throw new OverbrimError('unreadable', `A packed structure starts with the words ${found}; expected ${expected.join(', ')}, so make it again with this version.`);
+    throw new OverbrimError(
+      'unreadable',
+      `A packed structure starts with the words ${found}; expected ${expected.join(', ')}, so make it again with this version.`,
+    );
   }
   const sections: Record<string, Packable> = {};
   let offset = aligned(headBytes);
@@ -74,7 +81,10 @@ export function viewPacked<L extends Layout>(buffer: ArrayBuffer, kind: number, 
     const length = words[at + 1] + words[at + 2] * 4294967296;
     const end = offset + aligned(length * bytesOf(type));
     if (typeNames[words[at]] !== type || end > buffer.byteLength) {
-      throw new OverbrimError('unreadable', `Section "${name}" of a packed structure is of another type or cut off at ${buffer.byteLength} bytes; expected ${length} values of ${type}, so make it again.`);
+      throw new OverbrimError(
+        'unreadable',
+        `Section "${name}" of a packed structure is of another type or cut off at ${buffer.byteLength} bytes; expected ${length} values of ${type}, so make it again.`,
+      );
     }
     sections[name] = new elementTypes[typeNames.indexOf(type)](buffer, offset, length);
     offset = end;

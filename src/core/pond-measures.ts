@@ -1,4 +1,4 @@
-import { depressionTree, type DepressionTree, smallestAbove } from './depression-tree.ts';
+import { type DepressionTree, depressionTree, smallestAbove } from './depression-tree.ts';
 import type { Depressions } from './depressions.ts';
 import { type Drainage, nowhere } from './drainage.ts';
 import { highSlice, lowSlice, sliceConstant } from './exact-sum.ts';

@@ -2,7 +2,7 @@ import { depressionTree, smallestAbove } from './depression-tree.ts';
 import type { Depressions } from './depressions.ts';
 import type { Drainage } from './drainage.ts';
 import type { Grid } from './grid.ts';
-import { directions, directionSteps, type Polygon, polygonsOf, reversed, sideStarts } from './rings.ts';
+import { directionSteps, directions, type Polygon, polygonsOf, reversed, sideStarts } from './rings.ts';
 import type { Survey } from './survey.ts';
 
 export interface PondOutline {

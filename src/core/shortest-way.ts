@@ -50,8 +50,10 @@ function leastDistance(grid: Grid, neighbours: Neighbours, to: number): (cell: n
   const { width, metrics, frame } = grid;
   // A hair shorter than true, so that rounding cannot make the bound too long.
   const hair = 1 - 1e-9;
-  const east = metrics.eastM.reduce((least, value) => Math.min(least, value), Number.POSITIVE_INFINITY) * hair;
-  const south = metrics.southM.reduce((least, value) => Math.min(least, value), Number.POSITIVE_INFINITY) * hair;
+  const east =
+    metrics.eastM.reduce((least, value) => Math.min(least, value), Number.POSITIVE_INFINITY) * hair;
+  const south =
+    metrics.southM.reduce((least, value) => Math.min(least, value), Number.POSITIVE_INFINITY) * hair;
   const diagonal = neighbours === 8 ? Math.sqrt(east * east + south * south) : east + south;
   const toRow = Math.floor(to / width);
   const toColumn = to - toRow * width;

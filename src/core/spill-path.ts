@@ -42,7 +42,10 @@ export function spillPath(
   start: number,
 ): SpillPath {
   if (!(start >= 0 && start < grid.elevationM.length) || survey.leaf[start] < 0) {
-    throw new OverbrimError('bad-input', `The start of the path, cell ${start}, is void or not one of the ${grid.elevationM.length} cells of the terrain; choose a place that has an elevation.`);
+    throw new OverbrimError(
+      'bad-input',
+      `The start of the path, cell ${start}, is void or not one of the ${grid.elevationM.length} cells of the terrain; choose a place that has an elevation.`,
+    );
   }
   const { elevationM } = grid;
   const { tree, levelM } = drainage;
@@ -87,7 +90,10 @@ export function spillPath(
     };
     const way = shortestWay(grid, survey.neighbours, cell, last, inside);
     if (way === undefined) {
-      throw new OverbrimError('failed', `No way was found through water at ${level} m from cell ${cell} to its pour point, cell ${last}; this is a fault of the program, please report it with the terrain.`);
+      throw new OverbrimError(
+        'failed',
+        `No way was found through water at ${level} m from cell ${cell} to its pour point, cell ${last}; this is a fault of the program, please report it with the terrain.`,
+      );
     }
     const ends = drainage.towards[exit] === outside;
     if (!exitIsSill) way.push(beyond);

@@ -2,7 +2,7 @@ import { OverbrimError } from './error.ts';
 import type { Grid, Neighbours } from './grid.ts';
 import { joinTiles } from './join-tiles.ts';
 import type { Survey } from './survey.ts';
-import { surveyTile, tileRoom, type TileSurvey } from './tile-survey.ts';
+import { surveyTile, type TileSurvey, tileRoom } from './tile-survey.ts';
 import { shapeOf, tilesOf, tileWindow } from './tile-window.ts';
 
 export interface SurveyOptions {
@@ -36,7 +36,10 @@ export function surveyOf(grid: Grid, options: SurveyOptions = {}): Survey {
 export function* surveySteps(grid: Grid, options: SurveyOptions = {}): Generator<number, Survey> {
   const size = options.tileSize ?? usualTile;
   if (!(Number.isInteger(size) && size >= 1 && size <= largestTile)) {
-    throw new OverbrimError('bad-input', `The tile size is ${size}; expected a whole number of cells from 1 to ${largestTile}.`);
+    throw new OverbrimError(
+      'bad-input',
+      `The tile size is ${size}; expected a whole number of cells from 1 to ${largestTile}.`,
+    );
   }
   const neighbours = options.neighbours ?? 8;
   const madePits = options.madePits ?? [];

@@ -29,8 +29,9 @@ const layout = [
   ['rimLeaf', 'i32'],
   ['rimCell', 'f64'],
   ['rimElevationM', 'f32'],
-  /** Pieces of void (8-connected) by their first cell in row order: whether they reach the rim, and cells. */
+  /** Pieces of void (8-connected) by their first cell in row order: whether they reach the rim, are of a gap between files, and cells. */
   ['voidOnRim', 'u8'],
+  ['voidIsGap', 'u8'],
   ['voidCells', 'f64'],
   /** Each leaf's lowest cell beside each piece of void; by leaf, then piece. */
   ['besideLeaf', 'i32'],
@@ -74,6 +75,7 @@ export function allocateSurvey(
     rimCell: rim,
     rimElevationM: rim,
     voidOnRim: voids,
+    voidIsGap: voids,
     voidCells: voids,
     besideLeaf: beside,
     besidePiece: beside,
@@ -88,5 +90,13 @@ export function allocateSurvey(
 export function viewSurvey(buffer: ArrayBuffer): Survey {
   const sections = viewPacked(buffer, kind, layout);
   const [width, height, neighbours, wraps, leaves] = sections.head;
-  return { buffer, ...sections, width, height, neighbours: neighbours === 4 ? 4 : 8, wraps: wraps === 1, leaves };
+  return {
+    buffer,
+    ...sections,
+    width,
+    height,
+    neighbours: neighbours === 4 ? 4 : 8,
+    wraps: wraps === 1,
+    leaves,
+  };
 }

@@ -1,4 +1,4 @@
-import { type Labels, haloLabel } from './labels.ts';
+import { haloLabel, type Labels } from './labels.ts';
 import { type Receivers, steps } from './receivers.ts';
 import { sideBits } from './saddles.ts';
 import { cellAt, type TileWindow } from './tile-window.ts';
@@ -38,7 +38,12 @@ export function sillRoom(cells: number): SillRoom {
  * their elevation; sorting by (elevation, sequence) gives the total order, and Kruskal (1956) the forest. A
  * heaviest edge of a cycle is never needed again, whatever is joined, added or declared an outlet later.
  */
-export function tileSills(window: TileWindow, receivers: Receivers, labels: Labels, room: SillRoom): TileSills {
+export function tileSills(
+  window: TileWindow,
+  receivers: Receivers,
+  labels: Labels,
+  room: SillRoom,
+): TileSills {
   const { keys, sill, other } = room;
   const { label } = labels;
   const count = candidates(window, receivers, labels, room);

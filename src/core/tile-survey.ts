@@ -1,7 +1,7 @@
 import { highSlice, lowSlice, sliceConstant } from './exact-sum.ts';
-import { labelsOf, type Labels } from './labels.ts';
+import { type Labels, labelsOf } from './labels.ts';
 import { allocatePacked, type Sections, viewPacked } from './packed.ts';
-import { receiverRoom, type ReceiverRoom, receiversOf } from './receivers.ts';
+import { type ReceiverRoom, receiverRoom, receiversOf } from './receivers.ts';
 import { type SillRoom, sillRoom, tileSills } from './tile-sills.ts';
 import { cellAt, type TileWindow } from './tile-window.ts';
 import { besideVoid, isOnRim, voidPiecesOf } from './void-pieces.ts';
@@ -38,8 +38,9 @@ const layout = [
   ['pole', 'u8'],
   ['poleCell', 'f64'],
   ['poleElevationM', 'f32'],
-  /** Pieces of void: whether on the rim, how many cells of the tile, and first cell. */
+  /** Pieces of void: whether on the rim, whether of a gap between files, how many cells of the tile, and first cell. */
   ['voidOnRim', 'u8'],
+  ['voidIsGap', 'u8'],
   ['voidCells', 'f64'],
   ['voidFirstCell', 'f64'],
   /** Void cells on the tile's perimeter and in its halo, with their piece: where pieces of two tiles are one. */
@@ -108,6 +109,7 @@ export function surveyTile(window: TileWindow, room: TileRoom): TileSurvey {
     poleCell: pole.length,
     poleElevationM: pole.length,
     voidOnRim: pieces.count,
+    voidIsGap: pieces.count,
     voidCells: pieces.count,
     voidFirstCell: pieces.count,
     sharedVoidCell: shared.length,
@@ -148,6 +150,7 @@ export function surveyTile(window: TileWindow, room: TileRoom): TileSurvey {
     sections.poleElevationM[i] = z[position];
   });
   sections.voidOnRim.set(pieces.onRim);
+  sections.voidIsGap.set(pieces.isGap);
   sections.voidCells.set(pieces.cells);
   sections.voidFirstCell.set(pieces.firstCell);
   shared.forEach((position, i) => {

@@ -1,12 +1,7 @@
-import type { Grid, Neighbours, Side } from './grid.ts';
+import type { CellRect, Grid, Neighbours, Side } from './grid.ts';
 
 /** A rectangle of cells that is surveyed on its own. */
-export interface Tile {
-  readonly column: number;
-  readonly row: number;
-  readonly width: number;
-  readonly height: number;
-}
+export type Tile = CellRect;
 
 /** What a tile needs to know of the grid that it is cut from. */
 export interface GridShape {
@@ -34,6 +29,8 @@ export interface TileWindow {
   readonly areaBoundM2: number;
   /** Window positions of cells that are made pits. */
   readonly madePits: readonly number[];
+  /** Gaps of the grid that may reach into the window. */
+  readonly gaps: readonly CellRect[];
   readonly neighbours: Neighbours;
 }
 
@@ -42,7 +39,12 @@ export function tilesOf(width: number, height: number, size: number): Tile[] {
   const tiles: Tile[] = [];
   for (let row = 0; row < height; row += size) {
     for (let column = 0; column < width; column += size) {
-      tiles.push({ column, row, width: Math.min(size, width - column), height: Math.min(size, height - row) });
+      tiles.push({
+        column,
+        row,
+        width: Math.min(size, width - column),
+        height: Math.min(size, height - row),
+      });
     }
   }
   return tiles;
@@ -93,6 +95,7 @@ export function tileWindow(
     uniform: metrics.uniform,
     areaBoundM2: metrics.areaBoundM2,
     madePits: pits,
+    gaps: grid.gaps.filter((gap) => isNear(gap, tile, grid)),
     neighbours,
   };
 }
@@ -110,6 +113,13 @@ export function cellAt(position: number, tile: Tile, grid: GridShape): number {
   const row = tile.row + r - 1;
   const column = columnBeside(tile.column + position - r * stride - 1, grid);
   return row < 0 || row >= grid.height || column < 0 ? -1 : row * grid.width + column;
+}
+
+/** Whether a rectangle may touch a tile or its halo; columns count as near wherever the grid wraps. */
+function isNear(rect: CellRect, tile: Tile, grid: Grid): boolean {
+  const rows = rect.row <= tile.row + tile.height && tile.row <= rect.row + rect.height;
+  const columns = rect.column <= tile.column + tile.width && tile.column <= rect.column + rect.width;
+  return rows && (columns || grid.frame.wraps);
 }
 
 function firstAtLeast(sorted: ArrayLike<number>, value: number): number {

@@ -1,11 +1,11 @@
-import { columnStep, rowStep, sideBits } from './saddles.ts';
-import { steps } from './receivers.ts';
-import { cellAt, type TileWindow } from './tile-window.ts';
 import type { Labels } from './labels.ts';
+import { steps } from './receivers.ts';
+import { columnStep, rowStep, sideBits } from './saddles.ts';
+import { cellAt, type TileWindow } from './tile-window.ts';
 
 /**
  * Pieces of void of one tile, 8-connected, halo included, so that pieces of two tiles that share a void cell are
- * the same piece.
+ * the same piece. Cells of a gap between files make pieces of their own.
  */
 export interface VoidPieces {
   readonly count: number;
@@ -13,6 +13,8 @@ export interface VoidPieces {
   readonly piece: Int32Array;
   /** 1 for a piece with a cell on the rim of the data. */
   readonly onRim: Uint8Array;
+  /** 1 for a piece of a gap between files. */
+  readonly isGap: Uint8Array;
   /** Void cells of the tile itself, a piece. */
   readonly cells: Float64Array;
   /** Smallest row-major index of a piece's cells, halo included. */
@@ -30,6 +32,7 @@ const none: VoidPieces = {
   count: 0,
   piece: new Int32Array(0),
   onRim: new Uint8Array(0),
+  isGap: new Uint8Array(0),
   cells: new Float64Array(0),
   firstCell: new Float64Array(0),
 };
@@ -40,13 +43,17 @@ export function voidPiecesOf(window: TileWindow): VoidPieces {
   if (!holdsVoid(window)) return none;
   const piece = new Int32Array(z.length).fill(-1);
   const step = steps(stride);
+  const isGapCell = gapTest(window);
   const onRim: number[] = [];
+  const isGap: number[] = [];
   const cells: number[] = [];
   const firstCell: number[] = [];
   const stack: number[] = [];
   for (let first = 0; first < z.length; first++) {
     if (z[first] === z[first] || piece[first] >= 0 || cellAt(first, tile, grid) < 0) continue;
     const id = onRim.push(0) - 1;
+    const ofGap = isGapCell(first);
+    isGap.push(ofGap ? 1 : 0);
     cells.push(0);
     firstCell.push(Number.POSITIVE_INFINITY);
     piece[first] = id;
@@ -64,7 +71,7 @@ export function voidPiecesOf(window: TileWindow): VoidPieces {
         const nc = c + columnStep[k];
         if (nr < 0 || nc < 0 || nr > tile.height + 1 || nc > tile.width + 1) continue;
         const n = at + step[k];
-        if (z[n] === z[n] || piece[n] >= 0 || cellAt(n, tile, grid) < 0) continue;
+        if (z[n] === z[n] || piece[n] >= 0 || cellAt(n, tile, grid) < 0 || isGapCell(n) !== ofGap) continue;
         piece[n] = id;
         stack.push(n);
       }
@@ -74,6 +81,7 @@ export function voidPiecesOf(window: TileWindow): VoidPieces {
     count: onRim.length,
     piece,
     onRim: Uint8Array.from(onRim),
+    isGap: Uint8Array.from(isGap),
     cells: Float64Array.from(cells),
     firstCell: Float64Array.from(firstCell),
   };
@@ -113,6 +121,24 @@ export function besideVoid(window: TileWindow, labels: Labels, pieces: VoidPiece
     }
   }
   return [...lowest.values()];
+}
+
+/** Whether a window position lies in a gap between files. */
+function gapTest(window: TileWindow): (position: number) => boolean {
+  const { tile, grid, gaps } = window;
+  if (gaps.length === 0) return () => false;
+  return (position) => {
+    const cell = cellAt(position, tile, grid);
+    const row = Math.floor(cell / grid.width);
+    const column = cell - row * grid.width;
+    return gaps.some(
+      (gap) =>
+        row >= gap.row &&
+        row < gap.row + gap.height &&
+        column >= gap.column &&
+        column < gap.column + gap.width,
+    );
+  };
 }
 
 function holdsVoid(window: TileWindow): boolean {

@@ -39,9 +39,8 @@ export class TerrainShelf implements TerrainStore {
     const held = this.#terrains.get(key);
     if (held !== undefined) return held;
     context.progress(0, 'reading elevation');
-    const sources: ByteSource[] = [];
+    const sources = await this.#sources(references);
     try {
-      for (const reference of references) sources.push(await this.#reach.source(reference));
       const terrain = await openTerrain(sources, {
         ...(verticalUnit === undefined ? {} : { verticalUnit }),
         ...(this.#reach.epsg === undefined ? {} : { epsg: this.#reach.epsg }),
@@ -56,8 +55,18 @@ export class TerrainShelf implements TerrainStore {
         throw new OverbrimError('unreadable', error.message, { cause: error });
       }
       throw error;
-    } finally {
+    }
+  }
+
+  /** Opens all, or closes again what is open. */
+  async #sources(references: readonly string[]): Promise<ByteSource[]> {
+    const sources: ByteSource[] = [];
+    try {
+      for (const reference of references) sources.push(await this.#reach.source(reference));
+      return sources;
+    } catch (error) {
       for (const source of sources) await source.close?.();
+      throw error;
     }
   }
 
@@ -95,7 +104,10 @@ export class TerrainShelf implements TerrainStore {
       await source.read(0, 1);
       const size = source.size ?? 0;
       if (size > mostTextBytes) {
-        throw new OverbrimError('too-large', `${source.name} has ${size} bytes; expected a GeoJSON file of at most ${mostTextBytes}, so cut it to the terrain.`);
+        throw new OverbrimError(
+          'too-large',
+          `${source.name} has ${size} bytes; expected a GeoJSON file of at most ${mostTextBytes}, so cut it to the terrain.`,
+        );
       }
       return new TextDecoder().decode(await source.read(0, size));
     } finally {

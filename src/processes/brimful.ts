@@ -76,7 +76,9 @@ async function outletRules(inputs: Inputs, terrain: Terrain, store: TerrainStore
       addOutlet(levels, [cell], Number.NEGATIVE_INFINITY);
     } else addOutletFeatures(levels, terrain, outlet, await store.text(outlet));
   }
-  return { edges: inputs.edges as OutletRules['edges'], voids, cells: sortedOutlets(levels) };
+  const edges = inputs.edges as OutletRules['edges'];
+  const gaps = inputs.gaps as OutletRules['gaps'];
+  return { edges, voids, gaps, cells: sortedOutlets(levels) };
 }
 
 function recordTerrain(terrain: Terrain, context: JobContext): void {

@@ -35,6 +35,13 @@ export const terrainInputs = {
     schema: { type: 'string', enum: ['rim', 'walls', 'all'], default: 'rim' },
     minOccurs: 0,
   },
+  gaps: {
+    title: 'what narrow gaps between the files of a mosaic are: walls or open',
+    description:
+      'Up to 3 cells without elevation between two files are taken for a fault of the tiling. Open, water leaves through them; one such gap can empty a basin.',
+    schema: { type: 'string', enum: ['walls', 'open'], default: 'walls' },
+    minOccurs: 0,
+  },
   outlets: {
     title: 'further outlets: GeoJSON file, x,y, voids or deepest',
     description:

@@ -40,7 +40,11 @@ export function cellsOfLine(line: readonly Point[], width: number, height: numbe
  * Cells whose centre lies inside a polygon (rings of columns and rows as fractions, even-odd rule); when none
  * does, the cells that its outline runs through.
  */
-export function cellsOfPolygon(rings: readonly (readonly Point[])[], width: number, height: number): number[] {
+export function cellsOfPolygon(
+  rings: readonly (readonly Point[])[],
+  width: number,
+  height: number,
+): number[] {
   const cells: number[] = [];
   let top = Number.POSITIVE_INFINITY;
   let bottom = Number.NEGATIVE_INFINITY;

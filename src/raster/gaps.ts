@@ -1,5 +1,5 @@
+import type { CellRect } from '../core/grid.ts';
 import type { Part } from './mosaic.ts';
-import type { CellRect } from './terrain.ts';
 
 /** Widest strip between two tiles that counts as a gap and not as ground without data. */
 export const widestGap = 3;

@@ -1,8 +1,8 @@
 import { OverbrimError } from '../core/error.ts';
+import type { CellRect } from '../core/grid.ts';
 import type { ElevationFile } from './elevation-file.ts';
 import type { Placement } from './georeference.ts';
 import type { ImageLayout } from './image-layout.ts';
-import type { CellRect } from './terrain.ts';
 
 /** One file's place in the common grid, in cells of it. */
 export interface Part extends CellRect {

@@ -1,4 +1,5 @@
 import { OverbrimError } from '../core/error.ts';
+import type { CellRect } from '../core/grid.ts';
 import { type Grid, gridOf, plainFrame } from '../core/grid.ts';
 import { geographicMetrics, projectedMetrics } from '../core/metrics.ts';
 import { type ByteSource, memorySource } from './byte-source.ts';
@@ -16,7 +17,7 @@ import { paintWindow } from './paint-window.ts';
 import { checkedPlaces } from './read-blocks.ts';
 import { cut, type Extract, type Plan, readingPlan } from './reading-plan.ts';
 import { seamSteps } from './seams.ts';
-import type { CellRect, Georeference, Terrain, TerrainFile, VerticalUnit } from './terrain.ts';
+import type { Georeference, Terrain, TerrainFile, VerticalUnit } from './terrain.ts';
 import { terrainHash } from './terrain-hash.ts';
 import { verticalUnitM } from './vertical.ts';
 
@@ -63,10 +64,10 @@ async function read(sources: readonly ByteSource[], options: OpenOptions): Promi
   const tasks = await readingTasks(plan);
   const hashes = await wholeFiles(files, plan, limits);
   const elevationM = await paintedElevations(plan, tasks, options);
-  const grid = gridFor(files[0], plan, elevationM);
-  const georeference = georeferenceFor(files[0], plan);
   const parts = partsIn(plan);
   const gaps = gapsBetween(parts);
+  const grid = gridFor(files[0], plan, elevationM, gaps);
+  const georeference = georeferenceFor(files[0], plan);
   notices.push(...gaps.map((gap) => gapNotice(gap, georeference)));
   notices.push(...seamSteps(parts, grid.elevationM, grid.width).map(seamNotice));
   return {
@@ -77,7 +78,6 @@ async function read(sources: readonly ByteSource[], options: OpenOptions): Promi
     files: await Promise.all(files.map(async (file, i) => identified(file, hashes[i]))),
     sha256: await terrainHash(grid.width, grid.height, georeference, grid.elevationM),
     notices,
-    gaps: gaps.map(({ column, row, width, height }) => ({ column, row, width, height })),
     droppedColumn: plan.droppedColumn && plan.rect.width === plan.mosaic.width - 1,
   };
 }
@@ -167,16 +167,28 @@ function allocated({ width, height }: CellRect): Float32Array {
   }
 }
 
-function gridFor({ crs }: ElevationFile, plan: Plan, elevationM: Float32Array): Grid {
+function gridFor(
+  { crs }: ElevationFile,
+  plan: Plan,
+  elevationM: Float32Array,
+  gaps: readonly CellRect[],
+): Grid {
   const { rect, mosaic } = plan;
   const { north, cellWidth, cellHeight } = mosaic.placement;
   if (crs.kind === 'projected') {
     const unit = crs.unitM ?? 1;
     const metrics = projectedMetrics(rect.height, cellWidth * unit, cellHeight * unit);
-    return gridOf(rect.width, rect.height, elevationM, metrics, plainFrame);
+    return gridOf(rect.width, rect.height, elevationM, metrics, plainFrame, gaps);
   }
   const metrics = geographicMetrics(rect.height, north - rect.row * cellHeight, cellWidth, cellHeight, crs);
-  return gridOf(rect.width, rect.height, elevationM, metrics, frameOf(mosaic, rect, plan.droppedColumn));
+  return gridOf(
+    rect.width,
+    rect.height,
+    elevationM,
+    metrics,
+    frameOf(mosaic, rect, plan.droppedColumn),
+    gaps,
+  );
 }
 
 /** The whole globe's frame as far as the window keeps it. */

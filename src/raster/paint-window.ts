@@ -1,8 +1,8 @@
+import type { CellRect } from '../core/grid.ts';
 import type { ValueMeaning } from './cell-values.ts';
 import type { BlockPlaces, ImageLayout } from './image-layout.ts';
 import { type Block, blockSamples, blocksIn, rowsRead } from './read-blocks.ts';
 import { type Samples, sampleBytes } from './sample-type.ts';
-import type { CellRect } from './terrain.ts';
 
 /** Where cells are painted: row-major elevations in metres, NaN = void. */
 export interface Canvas {

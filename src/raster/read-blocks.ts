@@ -1,9 +1,9 @@
 import { OverbrimError } from '../core/error.ts';
+import type { CellRect } from '../core/grid.ts';
 import { decodeBlock, readableCompressions } from './decode-block.ts';
 import { type BlockPlaces, blockPlaces, type ImageLayout } from './image-layout.ts';
 import { cellsBeyondDoubt, cellsPerByte } from './limits.ts';
 import { type Samples, sampleBytes, samplesOf } from './sample-type.ts';
-import type { CellRect } from './terrain.ts';
 
 /**
  * Checks that the file could hold the cells wanted, before anything is allocated for them.

@@ -1,8 +1,8 @@
 import { OverbrimError } from '../core/error.ts';
+import type { CellRect } from '../core/grid.ts';
 import type { ElevationFile } from './elevation-file.ts';
 import { globeOf } from './globe.ts';
 import { type Mosaic, mosaicOf } from './mosaic.ts';
-import type { CellRect } from './terrain.ts';
 
 /** Which part of the terrain to read, and how finely. */
 export interface Extract {

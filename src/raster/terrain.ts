@@ -61,14 +61,6 @@ export interface Notice {
   readonly message: string;
 }
 
-/** A rectangle of cells. */
-export interface CellRect {
-  readonly column: number;
-  readonly row: number;
-  readonly width: number;
-  readonly height: number;
-}
-
 /** Elevation ready for a survey, with its place and its origin. */
 export interface Terrain {
   readonly grid: Grid;
@@ -80,8 +72,6 @@ export interface Terrain {
   /** SHA-256 over grid shape, georeference and elevations (float32 metres), hex: the same terrain whatever file it came in. */
   readonly sha256: string;
   readonly notices: readonly Notice[];
-  /** Gaps of up to 3 cells between the tiles of a mosaic, in cells of the grid; all void. Empty for one file. */
-  readonly gaps: readonly CellRect[];
   /** The file's last column repeated its first (360° + one cell); it was dropped and is restored on writing. */
   readonly droppedColumn: boolean;
 }
