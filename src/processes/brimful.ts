@@ -40,8 +40,7 @@ export interface Brimful {
  * @throws OverbrimError `no-outlet` when no water can leave anywhere; and what reading and outlets throw.
  */
 export async function brimful(inputs: Inputs, context: JobContext, store: TerrainStore): Promise<Brimful> {
-  const references = inputs.terrain as readonly string[];
-  const terrain = await store.terrain(references, inputs.verticalUnit as VerticalUnit | undefined, context);
+  const terrain = await terrainOf(inputs, context, store);
   recordTerrain(terrain, context);
   const { grid } = terrain;
   const rules = await outletRules(inputs, terrain, store);
@@ -63,6 +62,12 @@ export async function brimful(inputs: Inputs, context: JobContext, store: Terrai
   await context.breathe();
   noteLandlocked(survey, drainage, context);
   return { terrain, grid, survey, drainage, depressions, measures };
+}
+
+/** The terrain that the inputs name. */
+export function terrainOf(inputs: Inputs, context: JobContext, store: TerrainStore): Promise<Terrain> {
+  const references = inputs.terrain as readonly string[];
+  return store.terrain(references, inputs.verticalUnit as VerticalUnit | undefined, context);
 }
 
 async function outletRules(inputs: Inputs, terrain: Terrain, store: TerrainStore): Promise<OutletRules> {

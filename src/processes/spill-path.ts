@@ -3,7 +3,7 @@ import { distanceM, spillPath as coreSpillPath, type SpillLeg, type SpillPath } 
 import type { Json, Process, ProcessDescription } from '../host/index.ts';
 import { cellCentre } from '../raster/place.ts';
 import { toCrs84 } from '../raster/transform.ts';
-import { type Brimful, brimful } from './brimful.ts';
+import { type Brimful, brimful, terrainOf } from './brimful.ts';
 import { degrees, featureCollectionText, figure, float32Figure } from './geojson-text.ts';
 import { pondNames } from './pond-names.ts';
 import { terrainInputs } from './terrain-inputs.ts';
@@ -45,10 +45,12 @@ const description: ProcessDescription = {
 export const spillPath: Process<TerrainStore> = {
   description,
   async run(inputs, context, store) {
-    const analysis = await brimful(inputs, context, store);
-    const { terrain, grid, survey, drainage, depressions } = analysis;
+    // A place outside the terrain should be told before the survey, not after it.
+    const terrain = await terrainOf(inputs, context, store);
     const crs = inputs.crs as string | undefined;
     const start = await typedCell(terrain, 'from', inputs.from as string, crs, store);
+    const analysis = await brimful(inputs, context, store);
+    const { grid, survey, drainage, depressions } = analysis;
     context.progress(0.9, 'tracing the path');
     await context.breathe();
     const path = coreSpillPath(grid, survey, drainage, depressions, start);

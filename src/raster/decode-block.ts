@@ -1,8 +1,8 @@
 import { unzlibSync } from 'fflate';
 import { OverbrimError } from '../core/error.ts';
 import { decodeLzw } from './lzw.ts';
+import { decodePackBits } from './pack-bits.ts';
 import { undoPredictor } from './undo-predictor.ts';
-import { zstdContentBytes } from './zstd-frame.ts';
 
 /** Methods read here, by the number in tag 259, with the most bytes that one compressed byte can unfold to. */
 export const readableCompressions: ReadonlyMap<number, number> = new Map([
@@ -66,26 +66,19 @@ async function unpacked(data: Uint8Array, compression: number, expected: number)
       return data.slice();
     case 5:
       return decodeLzw(data, expected);
-    case 32773: {
-      // Run lengths unfold at most 64-fold, so the library's decoder is bounded by the block's own length.
-      const { getDecoder } = await import('geotiff');
-      return new Uint8Array(await (await getDecoder(32773, unpredicted)).decode(copyOf(data)));
-    }
+    case 32773:
+      return decodePackBits(data, expected);
     case 50000: {
-      if (zstdContentBytes(data) !== expected) throw new Error('The frame tells another length.');
-      const { getDecoder } = await import('geotiff');
-      return new Uint8Array(await (await getDecoder(50000, unpredicted)).decode(copyOf(data)));
+      const { ZSTDDecoder } = await import('zstddec');
+      const decoder = new ZSTDDecoder();
+      await decoder.init();
+      // With the length given, the library unpacks into that much memory and no more.
+      return decoder.decode(data, expected);
     }
     default:
       // With a buffer given, the library never grows it.
       return unzlibSync(data, { out: new Uint8Array(expected) });
   }
-}
-
-const unpredicted = { tileWidth: 1, tileHeight: 1, predictor: 1, bitsPerSample: 8, planarConfiguration: 1 };
-
-function copyOf(data: Uint8Array): ArrayBuffer {
-  return data.slice().buffer as ArrayBuffer;
 }
 
 function damaged(name: string, cause?: unknown): OverbrimError {
