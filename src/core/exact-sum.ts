@@ -3,7 +3,8 @@
  * sums are exact in float64 for up to 2³¹ terms, so adding them in any order gives the same bits.
  * Pre-rounding as in Demmel & Nguyen, Parallel Reproducible Summation, 2015; with the bound known beforehand.
  *
- * The result is exact when no term needs more than 44 bits below the bound, else within 2⁻⁴⁴ of it a term.
+ * The result is exact when no term needs bits below 2⁻⁴³ of the power of two at or above the bound, else within
+ * 2⁻⁴⁴ of that power a term.
  */
 const sliceBits = 22;
 const termBits = 31;

@@ -1,6 +1,12 @@
 import { type Schema, Validator } from '@cfworker/json-schema';
 import { OverbrimError } from '../core/error.ts';
-import { type InputDescription, isList, isRequired, type Json, type ProcessDescription } from './description.ts';
+import {
+  type InputDescription,
+  isList,
+  isRequired,
+  type Json,
+  type ProcessDescription,
+} from './description.ts';
 import type { Inputs } from './process.ts';
 
 /**
@@ -8,11 +14,17 @@ import type { Inputs } from './process.ts';
  * code, so it works under policies that forbid that.
  * @throws OverbrimError `bad-input` naming the input, the value found and what was expected.
  */
-export function checkedInputs(description: ProcessDescription, given: Readonly<Record<string, Json>>): Inputs {
+export function checkedInputs(
+  description: ProcessDescription,
+  given: Readonly<Record<string, Json>>,
+): Inputs {
   for (const name of Object.keys(given)) {
     if (description.inputs[name] === undefined) {
       const known = Object.keys(description.inputs).join(', ');
-      throw new OverbrimError('bad-input', `The process ${description.id} has no input "${name}"; it takes ${known}.`);
+      throw new OverbrimError(
+        'bad-input',
+        `The process ${description.id} has no input "${name}"; it takes ${known}.`,
+      );
     }
   }
   const checked: Record<string, Json> = {};
@@ -20,7 +32,10 @@ export function checkedInputs(description: ProcessDescription, given: Readonly<R
     const value = given[name];
     if (value === undefined) {
       if (isRequired(input)) {
-        throw new OverbrimError('bad-input', `The input "${name}" (${input.title}) is missing; the process ${description.id} cannot run without it, so give it.`);
+        throw new OverbrimError(
+          'bad-input',
+          `The input "${name}" (${input.title}) is missing; the process ${description.id} cannot run without it, so give it.`,
+        );
       }
       if (input.schema.default !== undefined) checked[name] = input.schema.default;
       continue;
@@ -35,7 +50,10 @@ function checkedList(name: string, input: InputDescription, value: Json): Json {
   const least = input.minOccurs ?? 1;
   const most = input.maxOccurs === 'unbounded' ? Number.POSITIVE_INFINITY : (input.maxOccurs ?? 1);
   if (list.length < least || list.length > most) {
-    throw new OverbrimError('bad-input', `The input "${name}" has ${list.length} values; expected ${least} to ${most === Number.POSITIVE_INFINITY ? 'any number' : most}.`);
+    throw new OverbrimError(
+      'bad-input',
+      `The input "${name}" has ${list.length} values; expected ${least} to ${most === Number.POSITIVE_INFINITY ? 'any number' : most}.`,
+    );
   }
   return list.map((entry) => checkedValue(name, input, entry));
 }
@@ -43,7 +61,10 @@ function checkedList(name: string, input: InputDescription, value: Json): Json {
 function checkedValue(name: string, input: InputDescription, value: Json): Json {
   const result = new Validator(input.schema as Schema, '7', true).validate(value);
   if (!result.valid) {
-    throw new OverbrimError('bad-input', `The input "${name}" is ${shown(value)}; expected ${expectation(input)}.`);
+    throw new OverbrimError(
+      'bad-input',
+      `The input "${name}" is ${shown(value)}; expected ${expectation(input)}.`,
+    );
   }
   return value;
 }
@@ -61,6 +82,9 @@ function expectation(input: InputDescription): string {
     schema.minimum === undefined ? '' : ` of at least ${schema.minimum}`,
     schema.maximum === undefined ? '' : ` and at most ${schema.maximum}`,
   ].join('');
-  const kind = schema.type === undefined ? 'a value' : `a ${schema.type === 'boolean' ? 'yes or no (true, false)' : schema.type}`;
+  const kind =
+    schema.type === undefined
+      ? 'a value'
+      : `a ${schema.type === 'boolean' ? 'yes or no (true, false)' : schema.type}`;
   return `${kind.replace('a integer', 'a whole number')}${range}: ${input.title}`;
 }

@@ -90,7 +90,10 @@ export class Job<Resources> {
           lastBreath = this.#now();
         }
         if (signal.aborted) {
-          throw new OverbrimError('cancelled', `The process ${this.description.id} was dismissed at ${Math.floor(100 * this.#done)} %; start it again when wanted.`);
+          throw new OverbrimError(
+            'cancelled',
+            `The process ${this.description.id} was dismissed at ${Math.floor(100 * this.#done)} %; start it again when wanted.`,
+          );
         }
       },
       note: (sentence) => notes.push(sentence),
@@ -130,6 +133,9 @@ function checkOutputs(description: ProcessDescription, outputs: Readonly<Record<
   const expected = Object.keys(description.outputs);
   const given = Object.keys(outputs);
   if (expected.length !== given.length || expected.some((id) => outputs[id] === undefined)) {
-    throw new OverbrimError('failed', `The process ${description.id} gave the outputs ${given.join(', ')}; its description promises ${expected.join(', ')}, so one of the two must be mended.`);
+    throw new OverbrimError(
+      'failed',
+      `The process ${description.id} gave the outputs ${given.join(', ')}; its description promises ${expected.join(', ')}, so one of the two must be mended.`,
+    );
   }
 }

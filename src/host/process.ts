@@ -4,7 +4,10 @@ import type { Json, ProcessDescription } from './description.ts';
  * An output as a process gives it: a JSON value, bytes, or text in pieces, made when they are asked for, so that
  * large results need not stand in memory.
  */
-export type OutputBody = { readonly json: Json } | { readonly bytes: Uint8Array } | { readonly text: Iterable<string> };
+export type OutputBody =
+  | { readonly json: Json }
+  | { readonly bytes: Uint8Array }
+  | { readonly text: Iterable<string> };
 
 /** What a process may ask of the job that it runs in. */
 export interface JobContext {

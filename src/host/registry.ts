@@ -9,10 +9,16 @@ export class Registry<Resources> {
   register(process: Process<Resources>): this {
     const { id } = process.description;
     if (!/^[a-z][a-z0-9-]*$/.test(id)) {
-      throw new OverbrimError('bad-input', `The process id is "${id}"; expected lower-case letters, digits and hyphens, so rename it.`);
+      throw new OverbrimError(
+        'bad-input',
+        `The process id is "${id}"; expected lower-case letters, digits and hyphens, so rename it.`,
+      );
     }
     if (this.#processes.has(id)) {
-      throw new OverbrimError('bad-input', `A process with the id "${id}" is registered already; choose another id.`);
+      throw new OverbrimError(
+        'bad-input',
+        `A process with the id "${id}" is registered already; choose another id.`,
+      );
     }
     this.#processes.set(id, process);
     return this;
@@ -27,7 +33,10 @@ export class Registry<Resources> {
   get(id: string): Process<Resources> {
     const process = this.#processes.get(id);
     if (process === undefined) {
-      throw new OverbrimError('bad-input', `There is no process "${id}"; expected one of ${[...this.#processes.keys()].join(', ')}.`);
+      throw new OverbrimError(
+        'bad-input',
+        `There is no process "${id}"; expected one of ${[...this.#processes.keys()].join(', ')}.`,
+      );
     }
     return process;
   }

@@ -2,7 +2,14 @@ import { isList, isRequired, mediaTypeOf, type ProcessDescription } from '../hos
 import { flagOf } from './process-options.ts';
 
 /** A process description for reading on a terminal. */
-export function descriptionText({ id, version, title, description, inputs, outputs }: ProcessDescription): string {
+export function descriptionText({
+  id,
+  version,
+  title,
+  description,
+  inputs,
+  outputs,
+}: ProcessDescription): string {
   const lines = [`${id} ${version}: ${title}`, '', description, '', 'Inputs'];
   for (const [name, input] of Object.entries(inputs)) {
     const { schema } = input;
@@ -11,7 +18,10 @@ export function descriptionText({ id, version, title, description, inputs, outpu
       isList(input) ? 'several' : '',
       schema.default === undefined ? '' : `usually ${schema.default}`,
     ].filter((mark) => mark !== '');
-    lines.push(`  ${flagOf(name)}${marks.length > 0 ? ` (${marks.join(', ')})` : ''}`, `      ${input.title}`);
+    lines.push(
+      `  ${flagOf(name)}${marks.length > 0 ? ` (${marks.join(', ')})` : ''}`,
+      `      ${input.title}`,
+    );
     if (input.description !== '') lines.push(`      ${input.description}`);
   }
   lines.push('', 'Outputs');

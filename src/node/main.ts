@@ -20,7 +20,9 @@ const wrongUse = new Set(['bad-input', 'unit-missing', 'no-outlet']);
 export async function main(args: readonly string[], terminal: Terminal): Promise<number> {
   const asJson = args.includes('--json');
   const program = new Command('overbrim')
-    .description('Says from a terrain elevation model where water will stand, how much, where it overflows and which way it runs.')
+    .description(
+      'Says from a terrain elevation model where water will stand, how much, where it overflows and which way it runs.',
+    )
     .version(software.version, '--version', 'print the version')
     .helpOption('--help', 'print this help')
     .helpCommand(false)
@@ -43,7 +45,9 @@ export async function main(args: readonly string[], terminal: Terminal): Promise
     .option('--text', 'for reading')
     .action((id: string, { text }: { text?: boolean }) => {
       const { description } = registry.get(id);
-      terminal.stdout.write(text === true ? descriptionText(description) : `${JSON.stringify(description, null, 2)}\n`);
+      terminal.stdout.write(
+        text === true ? descriptionText(description) : `${JSON.stringify(description, null, 2)}\n`,
+      );
     });
   const run = program.command('run').description('run a process and write its results into a folder');
   for (const process of registry.list()) {
@@ -56,7 +60,9 @@ export async function main(args: readonly string[], terminal: Terminal): Promise
         const inputs = inputsOf(process.description, options);
         const shelf = new TerrainShelf(reachFiles);
         const report = await runProcess(process, inputs, options.out, shelf, terminal, { quiet: asJson });
-        terminal.stdout.write(asJson ? `${JSON.stringify({ ...report, caution }, null, 2)}\n` : reportText(report));
+        terminal.stdout.write(
+          asJson ? `${JSON.stringify({ ...report, caution }, null, 2)}\n` : reportText(report),
+        );
       });
   }
   try {
@@ -84,7 +90,8 @@ function reportText({ folder, files, notes, values }: RunReport): string {
   const { summary } = values;
   if (typeof summary === 'object' && summary !== null) {
     lines.push('');
-    for (const [name, value] of Object.entries(summary)) lines.push(`  ${name.padEnd(24)} ${String(value).padStart(16)}`);
+    for (const [name, value] of Object.entries(summary))
+      lines.push(`  ${name.padEnd(24)} ${String(value).padStart(16)}`);
   }
   if (notes.length > 0) lines.push('', ...notes.map((note) => `Note: ${note}`));
   lines.push('', caution, '');
@@ -104,11 +111,20 @@ function explain(error: unknown, asJson: boolean, terminal: Terminal): number {
     return say('bad-input', message, exitCodes.wrongUse);
   }
   if (error instanceof OverbrimError) {
-    const code = error.code === 'cancelled' ? exitCodes.interrupted : wrongUse.has(error.code) ? exitCodes.wrongUse : exitCodes.failed;
+    const code =
+      error.code === 'cancelled'
+        ? exitCodes.interrupted
+        : wrongUse.has(error.code)
+          ? exitCodes.wrongUse
+          : exitCodes.failed;
     return say(error.code, error.message, code);
   }
   if (error instanceof RangeError && /allocation|array (buffer|length)/i.test(error.message)) {
-    return say('out-of-memory', `There is not enough memory (${error.message}); choose a smaller window or fewer files.`, exitCodes.failed);
+    return say(
+      'out-of-memory',
+      `There is not enough memory (${error.message}); choose a smaller window or fewer files.`,
+      exitCodes.failed,
+    );
   }
   const what = error instanceof Error ? (error.stack ?? error.message) : String(error);
   return say('failed', `This is a fault of the program, please report it: ${what}`, exitCodes.failed);

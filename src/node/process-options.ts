@@ -40,7 +40,10 @@ export function inputsOf(description: ProcessDescription, given: GivenOptions): 
     const id = text.slice(0, equals);
     const input = description.inputs[id];
     if (equals < 1 || input === undefined) {
-      throw new OverbrimError('bad-input', `--input was given "${text}"; expected name=value with one of the names ${Object.keys(description.inputs).join(', ')}.`);
+      throw new OverbrimError(
+        'bad-input',
+        `--input was given "${text}"; expected name=value with one of the names ${Object.keys(description.inputs).join(', ')}.`,
+      );
     }
     const value = parsed(`--input ${id}`, input, text.slice(equals + 1));
     const held = inputs[id];

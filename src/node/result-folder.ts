@@ -35,7 +35,10 @@ export class ResultFolder {
     }
     const other = processOfResult(join(this.path, resultFile));
     if (other !== null && other !== processId) {
-      throw new OverbrimError('bad-input', `The folder ${path} holds results of ${other}; choose another folder for ${processId} with --out.`);
+      throw new OverbrimError(
+        'bad-input',
+        `The folder ${path} holds results of ${other}; choose another folder for ${processId} with --out.`,
+      );
     }
   }
 
@@ -118,5 +121,9 @@ function processOfResult(path: string): string | null {
 
 function notWritten(path: string, cause: unknown): OverbrimError {
   const why = cause instanceof Error ? cause.message : String(cause);
-  return new OverbrimError('failed', `${path} could not be written (${why}); check the folder, its permissions and the space on the disk.`, { cause });
+  return new OverbrimError(
+    'failed',
+    `${path} could not be written (${why}); check the folder, its permissions and the space on the disk.`,
+    { cause },
+  );
 }

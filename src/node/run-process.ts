@@ -3,7 +3,7 @@ import type { TerrainShelf } from '../engine/index.ts';
 import { Job, type Json, mediaTypeOf, type Process } from '../host/index.ts';
 import { caution, type TerrainStore } from '../processes/index.ts';
 import { progressDisplay, silent } from './progress.ts';
-import { resultFile, ResultFolder, type WrittenFile } from './result-folder.ts';
+import { ResultFolder, resultFile, type WrittenFile } from './result-folder.ts';
 import { software } from './software.ts';
 import type { Terminal } from './terminal.ts';
 
@@ -53,7 +53,11 @@ export async function runProcess(
     job = new Job(process, inputs, shelf, { software, onProgress: (progress) => display.show(progress) });
     const { outputs, lineage, notes } = await job.result;
     const stop = (): void => {
-      if (interrupted > 0) throw new OverbrimError('cancelled', `The process ${description.id} was dismissed while its results were written; start it again when wanted.`);
+      if (interrupted > 0)
+        throw new OverbrimError(
+          'cancelled',
+          `The process ${description.id} was dismissed while its results were written; start it again when wanted.`,
+        );
     };
     const files: (WrittenFile & { output: string; mediaType: string })[] = [];
     const values: Record<string, Json> = {};

@@ -13,11 +13,17 @@ export function brimLevelRaster({ terrain, grid, survey, drainage }: Brimful): R
     ...restored(terrain, levels),
     noData,
     georeference: terrain.georeference,
-    metadata: { description: 'Brim level: elevation to which water fills the terrain before it overflows to an outlet', unit: 'm' },
+    metadata: {
+      description: 'Brim level: elevation to which water fills the terrain before it overflows to an outlet',
+      unit: 'm',
+    },
   };
 }
 
-function restored(terrain: Terrain, samples: Float32Array): { width: number; height: number; samples: Float32Array } {
+function restored(
+  terrain: Terrain,
+  samples: Float32Array,
+): { width: number; height: number; samples: Float32Array } {
   const { width, height } = terrain.grid;
   if (!terrain.droppedColumn) return { width, height, samples };
   const wider = new Float32Array((width + 1) * height);

@@ -1,13 +1,13 @@
 import {
   type Depressions,
-  depressionsOf,
   type Drainage,
+  depressionsOf,
   drainageOf,
   type Grid,
   type Neighbours,
+  type OutletRules,
   OverbrimError,
   outletPits,
-  type OutletRules,
   outletSills,
   type PondMeasures,
   pondMeasures,
@@ -49,7 +49,10 @@ export async function brimful(inputs: Inputs, context: JobContext, store: Terrai
   await context.breathe();
   const outlets = outletSills(grid, survey, rules);
   if (outlets.elevationM.length === 0) {
-    throw new OverbrimError('no-outlet', `The terrain has no outlet: edges are ${rules.edges}${grid.frame.wraps ? ' and the grid wraps around the globe' : ''}, voids are "${rules.voids}" and no outlet was named; open the edges or name an outlet, such as --outlets deepest.`);
+    throw new OverbrimError(
+      'no-outlet',
+      `The terrain has no outlet: edges are ${rules.edges}${grid.frame.wraps ? ' and the grid wraps around the globe' : ''}, voids are "${rules.voids}" and no outlet was named; open the edges or name an outlet, such as --outlets deepest.`,
+    );
   }
   context.progress(0.8, 'finding ponds');
   await context.breathe();
@@ -112,6 +115,8 @@ function noteLandlocked(survey: Survey, drainage: Drainage, context: JobContext)
     leaves++;
   });
   if (cells > 0) {
-    context.note(`${cells} cells in ${leaves} catchments have no way to any outlet, since voids or closed edges enclose them; they get no brim level and no pond.`);
+    context.note(
+      `${cells} cells in ${leaves} catchments have no way to any outlet, since voids or closed edges enclose them; they get no brim level and no pond.`,
+    );
   }
 }

@@ -1,7 +1,7 @@
 import type { JobContext, Process, ProcessDescription } from '../host/index.ts';
 import { cloudOptimizedGeoTiff } from '../raster/write-cog.ts';
-import { brimful } from './brimful.ts';
 import { brimLevelRaster } from './brim-raster.ts';
+import { brimful } from './brimful.ts';
 import { featureCollectionText, figure } from './geojson-text.ts';
 import { keptPonds, pondFeatures, pourPointFeatures } from './pond-features.ts';
 import { terrainInputs } from './terrain-inputs.ts';
@@ -26,7 +26,8 @@ const description: ProcessDescription = {
     },
     minArea: {
       title: 'least area at brim of ponds to write, square metres',
-      description: 'Ponds with a smaller water surface are left out of the features; the summary counts them.',
+      description:
+        'Ponds with a smaller water surface are left out of the features; the summary counts them.',
       schema: { type: 'number', minimum: 0, default: 0 },
       minOccurs: 0,
     },
@@ -47,7 +48,8 @@ const description: ProcessDescription = {
   outputs: {
     ponds: {
       title: 'Ponds',
-      description: 'One MultiPolygon a pond, along cell edges, in CRS84, with its levels, sizes and what it spills into.',
+      description:
+        'One MultiPolygon a pond, along cell edges, in CRS84, with its levels, sizes and what it spills into.',
       schema: { type: 'object', contentMediaType: 'application/geo+json' },
     },
     'pour-points': {
@@ -98,7 +100,13 @@ export const depressions: Process<TerrainStore> = {
   },
 };
 
-function summaryOf({ grid, survey, drainage, depressions: nodes, measures }: Awaited<ReturnType<typeof brimful>>): {
+function summaryOf({
+  grid,
+  survey,
+  drainage,
+  depressions: nodes,
+  measures,
+}: Awaited<ReturnType<typeof brimful>>): {
   [name: string]: number;
 } {
   let ponds = 0;
@@ -142,6 +150,8 @@ function noteOutletLevels(analysis: Awaited<ReturnType<typeof brimful>>, context
     if (nodes.spillElevationM[node] > grid.elevationM[sillCell]) held++;
   }
   if (held > 0) {
-    context.note(`${held} outermost ponds stand at the level of water outside an outlet (heldByOutlet); their capacity is no storage of the ground.`);
+    context.note(
+      `${held} outermost ponds stand at the level of water outside an outlet (heldByOutlet); their capacity is no storage of the ground.`,
+    );
   }
 }

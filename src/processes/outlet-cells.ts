@@ -1,6 +1,6 @@
 import kinks from '@turf/kinks';
 import type { Feature, FeatureCollection, Geometry, Polygon, Position } from 'geojson';
-import { OverbrimError, type OutletCells } from '../core/index.ts';
+import { type OutletCells, OverbrimError } from '../core/index.ts';
 import { cellsOfLine, cellsOfPolygon } from '../raster/burn.ts';
 import { gridPosition } from '../raster/place.ts';
 import type { Terrain } from '../raster/terrain.ts';
@@ -42,11 +42,17 @@ export function addOutletFeatures(levels: OutletLevels, terrain: Terrain, name: 
     const levelM = levelOf(what, feature);
     const inside = cellsOf(what, feature.geometry, terrain);
     if (inside.length === 0) {
-      throw new OverbrimError('bad-input', `${what} lies outside the terrain; give outlets inside it, as GeoJSON in longitude and latitude (CRS84).`);
+      throw new OverbrimError(
+        'bad-input',
+        `${what} lies outside the terrain; give outlets inside it, as GeoJSON in longitude and latitude (CRS84).`,
+      );
     }
     const cells = inside.filter((cell) => !Number.isNaN(terrain.grid.elevationM[cell]));
     if (cells.length === 0) {
-      throw new OverbrimError('bad-input', `${what} lies only on cells without elevation; name "voids" as outlet, or move it onto known ground.`);
+      throw new OverbrimError(
+        'bad-input',
+        `${what} lies only on cells without elevation; name "voids" as outlet, or move it onto known ground.`,
+      );
     }
     addOutlet(levels, cells, levelM);
   });
@@ -57,7 +63,11 @@ function featuresOf(name: string, text: string): Feature[] {
   try {
     document = JSON.parse(text);
   } catch (cause) {
-    throw new OverbrimError('bad-input', `${name} is not JSON (${cause instanceof Error ? cause.message : cause}); expected a GeoJSON file.`, { cause });
+    throw new OverbrimError(
+      'bad-input',
+      `${name} is not JSON (${cause instanceof Error ? cause.message : cause}); expected a GeoJSON file.`,
+      { cause },
+    );
   }
   if (document?.type === 'FeatureCollection' && 'features' in document && Array.isArray(document.features)) {
     return document.features;
@@ -66,14 +76,20 @@ function featuresOf(name: string, text: string): Feature[] {
   if (document?.type !== undefined && 'coordinates' in document) {
     return [{ type: 'Feature', properties: {}, geometry: document as Geometry }];
   }
-  throw new OverbrimError('bad-input', `${name} holds ${JSON.stringify(document?.type ?? typeof document)}; expected a GeoJSON FeatureCollection, Feature or geometry.`);
+  throw new OverbrimError(
+    'bad-input',
+    `${name} holds ${JSON.stringify(document?.type ?? typeof document)}; expected a GeoJSON FeatureCollection, Feature or geometry.`,
+  );
 }
 
 function levelOf(what: string, feature: Feature): number {
   const level: unknown = feature.properties?.levelM;
   if (level === undefined || level === null) return Number.NEGATIVE_INFINITY;
   if (typeof level !== 'number' || !Number.isFinite(level)) {
-    throw new OverbrimError('bad-input', `${what} has the level ${JSON.stringify(level)}; expected a number of metres as "levelM", or none.`);
+    throw new OverbrimError(
+      'bad-input',
+      `${what} has the level ${JSON.stringify(level)}; expected a number of metres as "levelM", or none.`,
+    );
   }
   return level;
 }
@@ -84,7 +100,10 @@ function cellsOf(what: string, geometry: Geometry | null, terrain: Terrain): num
   const place = (position: Position): Point => {
     const [longitude, latitude] = position;
     if (!Number.isFinite(longitude) || !Number.isFinite(latitude) || Math.abs(latitude) > 90) {
-      throw new OverbrimError('bad-input', `${what} has the position ${JSON.stringify(position)}; expected longitude and latitude in degrees.`);
+      throw new OverbrimError(
+        'bad-input',
+        `${what} has the position ${JSON.stringify(position)}; expected longitude and latitude in degrees.`,
+      );
     }
     return gridPosition(terrain, toTerrain(longitude, latitude));
   };
@@ -95,7 +114,11 @@ function cellsOf(what: string, geometry: Geometry | null, terrain: Terrain): num
   };
   const polygon = (rings: Position[][]): number[] => {
     refuseCrossing(what, rings);
-    return cellsOfPolygon(rings.map((ring) => ring.map(place)), width, height);
+    return cellsOfPolygon(
+      rings.map((ring) => ring.map(place)),
+      width,
+      height,
+    );
   };
   switch (geometry?.type) {
     case 'Point':
@@ -113,7 +136,10 @@ function cellsOf(what: string, geometry: Geometry | null, terrain: Terrain): num
     case 'GeometryCollection':
       return geometry.geometries.flatMap((part) => cellsOf(what, part, terrain));
     default:
-      throw new OverbrimError('bad-input', `${what} has the geometry ${JSON.stringify((geometry as Geometry | null)?.type ?? null)}; expected points, lines or polygons.`);
+      throw new OverbrimError(
+        'bad-input',
+        `${what} has the geometry ${JSON.stringify((geometry as Geometry | null)?.type ?? null)}; expected points, lines or polygons.`,
+      );
   }
 }
 
@@ -122,6 +148,9 @@ function refuseCrossing(what: string, rings: Position[][]): void {
   const crossing = kinks(polygon).features[0];
   if (crossing !== undefined) {
     const [longitude, latitude] = crossing.geometry.coordinates;
-    throw new OverbrimError('bad-input', `${what} is a polygon that crosses itself at ${longitude.toFixed(6)},${latitude.toFixed(6)}; mend its outline.`);
+    throw new OverbrimError(
+      'bad-input',
+      `${what} is a polygon that crosses itself at ${longitude.toFixed(6)},${latitude.toFixed(6)}; mend its outline.`,
+    );
   }
 }

@@ -37,7 +37,10 @@ export function* pondFeatures(analysis: Brimful, kept: Uint8Array, nested: boole
   const into = spillsInto(survey, drainage, depressions, kept);
   const cutColumn = antimeridianColumn(terrain);
   const ring = ringPlacer(terrain, cutColumn);
-  for (const { node, polygons } of pondOutlines(grid, survey, drainage, depressions, kept, { nested, cutColumn })) {
+  for (const { node, polygons } of pondOutlines(grid, survey, drainage, depressions, kept, {
+    nested,
+    cutColumn,
+  })) {
     const spillElevationM = depressions.spillElevationM[node];
     const pitElevationM = depressions.pitElevationM[node];
     const sillCell = drainage.tree.sillCell[depressions.pourSill[node]];

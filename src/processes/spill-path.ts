@@ -1,5 +1,5 @@
 import type { Feature, Position } from 'geojson';
-import { distanceM, spillPath as coreSpillPath, type SpillLeg, type SpillPath } from '../core/index.ts';
+import { spillPath as coreSpillPath, distanceM, type SpillLeg, type SpillPath } from '../core/index.ts';
 import type { Json, Process, ProcessDescription } from '../host/index.ts';
 import { cellCentre } from '../raster/place.ts';
 import { toCrs84 } from '../raster/transform.ts';
@@ -30,7 +30,8 @@ const description: ProcessDescription = {
   outputs: {
     'spill-path': {
       title: 'Spill path',
-      description: 'One line a leg, over land or through a pond, in CRS84, with length, drop, slope and storage to fill.',
+      description:
+        'One line a leg, over land or through a pond, in CRS84, with length, drop, slope and storage to fill.',
       schema: { type: 'object', contentMediaType: 'application/geo+json' },
     },
     'long-section': {
@@ -55,7 +56,9 @@ export const spillPath: Process<TerrainStore> = {
     await context.breathe();
     const path = coreSpillPath(grid, survey, drainage, depressions, start);
     if (path.end === 'no-way') {
-      context.note('The path ends in a pit from which no way leads to any outlet, since voids or closed edges enclose it.');
+      context.note(
+        'The path ends in a pit from which no way leads to any outlet, since voids or closed edges enclose it.',
+      );
     }
     return {
       'spill-path': { text: featureCollectionText(legFeatures(analysis, path)) },

@@ -25,7 +25,10 @@ export async function typedCell(
 ): Promise<number> {
   const match = pair.exec(text);
   if (match === null) {
-    throw new OverbrimError('bad-input', `The input "${name}" is "${text}"; expected a coordinate as x,y with a point as decimal sign, such as 1234.5,678.9.`);
+    throw new OverbrimError(
+      'bad-input',
+      `The input "${name}" is "${text}"; expected a coordinate as x,y with a point as decimal sign, such as 1234.5,678.9.`,
+    );
   }
   const typed: Point = [Number(match[1]), Number(match[2])];
   const { crs: own } = terrain.georeference;
@@ -33,10 +36,16 @@ export async function typedCell(
   const point = crs === undefined ? typed : transformer(named, own)(...typed);
   const cell = cellAtPoint(terrain, point);
   if (cell < 0) {
-    throw new OverbrimError('bad-input', `The place ${text} (${named.name}) lies outside the terrain, which reaches from ${extentText(terrain)}; check the coordinate, the order x,y and the input "crs".`);
+    throw new OverbrimError(
+      'bad-input',
+      `The place ${text} (${named.name}) lies outside the terrain, which reaches from ${extentText(terrain)}; check the coordinate, the order x,y and the input "crs".`,
+    );
   }
   if (Number.isNaN(terrain.grid.elevationM[cell])) {
-    throw new OverbrimError('bad-input', `The place ${text} lies on a cell without elevation (column ${cell % terrain.grid.width}, row ${Math.floor(cell / terrain.grid.width)}); choose a place on known ground.`);
+    throw new OverbrimError(
+      'bad-input',
+      `The place ${text} lies on a cell without elevation (column ${cell % terrain.grid.width}, row ${Math.floor(cell / terrain.grid.width)}); choose a place on known ground.`,
+    );
   }
   return cell;
 }
