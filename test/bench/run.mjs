@@ -19,4 +19,7 @@ const core = await import(file === undefined ? 'overbrim/core' : pathToFileURL(f
 // Only the benches themselves are TypeScript run through a transformer; what they measure is the built package.
 const bench = new URL('./survey-bench.ts', import.meta.url).pathname;
 const { module } = await runnerImport(bench, { configFile: false, logLevel: 'error' });
-await module.benchSurvey(core, given);
+await module.benchSurvey(core, given).catch((error) => {
+  console.error(error.message);
+  process.exitCode = 1;
+});
