@@ -1,0 +1,13 @@
+export { blobSource } from './blob-source.ts';
+export { type ByteSource, memorySource } from './byte-source.ts';
+export { crsFromEpsg } from './crs.ts';
+export type { EpsgEntry, EpsgLookup } from './epsg.ts';
+export { defaultLimits, type ReadLimits } from './limits.ts';
+export { type OpenOptions, openTerrain } from './open-terrain.ts';
+export type { OverviewRule } from './overviews.ts';
+export { cellAtPoint, cellCentre } from './place.ts';
+export type { RasterOut, Samples } from './raster-out.ts';
+export type { Crs, GeoKeyTags, Georeference, Notice, Terrain, TerrainFile, VerticalUnit } from './terrain.ts';
+export { fromCrs84, type Point, type Transform, toCrs84, transformer } from './transform.ts';
+export { type UrlOptions, urlSource } from './url-source.ts';
+export { type CogOptions, cloudOptimizedGeoTiff } from './write-cog.ts';

@@ -1,0 +1,95 @@
+import { existsSync, readFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { type Installed, installed } from './installed.ts';
+
+let user: Installed;
+beforeAll(() => {
+  user = installed(({ dependencies }) => Object.keys(dependencies));
+});
+afterAll(() => user?.remove());
+
+describe('what is shipped', () => {
+  test('is the build, the licence and the words for people, and nothing else', () => {
+    const others = user.files.filter((file) => !/^dist\/.+\.(js|js\.map|d\.ts)$/.test(file));
+    expect(others.sort()).toEqual([
+      'CHANGELOG.md',
+      'LICENSE',
+      'README.md',
+      'package.json',
+      'src/processes/depressions.md',
+      'src/processes/spill-path.md',
+    ]);
+  });
+
+  test('has a declaration for each module, and imports only files that are there', () => {
+    const modules = user.files.filter((file) => file.endsWith('.js'));
+    expect(modules.length).toBeGreaterThan(50);
+    for (const file of modules) expect(user.files).toContain(file.replace(/\.js$/, '.d.ts'));
+    let imports = 0;
+    for (const file of user.files.filter((name) => /\.(js|d\.ts)$/.test(name))) {
+      const text = readFileSync(join(user.packageFolder, file), 'utf8');
+      for (const [, , target = ''] of text.matchAll(/(from|import) ?\(?['"](\.[^'"]+)['"]/g)) {
+        expect(target, `in ${file}`).toMatch(/\.js$/);
+        // A declaration speaks of a module that may have nothing but types, and so no code.
+        const found = file.endsWith('.d.ts') ? target.replace(/\.js$/, '.d.ts') : target;
+        expect(existsSync(join(user.packageFolder, file, '..', found)), `${found} of ${file}`).toBe(true);
+        imports++;
+      }
+    }
+    expect(imports).toBeGreaterThan(100);
+  });
+});
+
+describe('a program that installed the package', () => {
+  test('can import each entry, and finds names there', () => {
+    const entries = Object.keys(user.manifest.exports).filter((entry) => entry !== './package.json');
+    expect(entries).toEqual(['.', './core', './raster', './host', './processes', './node']);
+    for (const entry of entries) {
+      const name = `overbrim${entry.slice(1)}`;
+      const script = `import * as names from '${name}'; console.log(Object.keys(names).length)`;
+      const { stdout, stderr } = user.node('--input-type=module', '--eval', script);
+      expect(stderr, name).toBe('');
+      expect(Number(stdout), name).toBeGreaterThan(0);
+    }
+  });
+
+  test('can run the command', () => {
+    const command = join(user.packageFolder, user.manifest.bin.overbrim ?? '');
+    expect(readFileSync(command, 'utf8')).toMatch(/^#!\/usr\/bin\/env node\n/);
+    const version = user.node(command, '--version');
+    expect(version).toMatchObject({ status: 0, stdout: `${user.manifest.version}\n`, stderr: '' });
+    const list = user.node(command, 'list');
+    expect(list).toMatchObject({ status: 0, stderr: '' });
+    expect(list.stdout).toMatch(/^depressions .*\nspill-path /);
+  });
+
+  test('shares one error class between the entries', () => {
+    const script = `
+      import { OverbrimError } from 'overbrim';
+      import { gridOf, projectedMetrics } from 'overbrim/core';
+      try { gridOf(2, 2, new Float32Array(3), projectedMetrics(2, 1, 1)); }
+      catch (error) { console.log(error instanceof OverbrimError, error.code); }`;
+    const { stdout, stderr } = user.node('--input-type=module', '--eval', script);
+    expect({ stdout, stderr }).toEqual({ stdout: 'true bad-input\n', stderr: '' });
+  });
+});
+
+describe('the analysis alone', () => {
+  test('needs no other package', () => {
+    const alone = installed(() => []);
+    try {
+      const script = `
+        import { brimLevels, drainageOf, gridOf, outletSills, projectedMetrics, surveyOf, usualOutlets } from 'overbrim/core';
+        const z = Float32Array.of(2, 2, 2, 2,  2, 0, 0, 1,  2, 2, 2, 2);
+        const grid = gridOf(4, 3, z, projectedMetrics(3, 1, 1));
+        const survey = surveyOf(grid);
+        const levels = brimLevels(grid, survey, drainageOf(survey, outletSills(grid, survey, usualOutlets)));
+        console.log([...levels].join());`;
+      const { stdout, stderr } = alone.node('--input-type=module', '--eval', script);
+      expect({ stdout, stderr }).toEqual({ stdout: '2,2,2,2,2,1,1,1,2,2,2,2\n', stderr: '' });
+    } finally {
+      alone.remove();
+    }
+  });
+});
