@@ -1,4 +1,5 @@
 export { checkedInputs } from './check-inputs.ts';
+export { defineProcess, type InputsOf, type OutputsOf } from './define-process.ts';
 export {
   type InputDescription,
   isList,

@@ -4,7 +4,6 @@ import {
   depressionsOf,
   drainageOf,
   type Grid,
-  type Neighbours,
   type OutletRules,
   OverbrimError,
   outletPits,
@@ -13,8 +12,8 @@ import {
   pondMeasures,
   type Survey,
 } from '../core/index.ts';
-import type { Inputs, JobContext } from '../host/index.ts';
-import type { Terrain, VerticalUnit } from '../raster/terrain.ts';
+import type { JobContext } from '../host/index.ts';
+import type { Terrain } from '../raster/terrain.ts';
 import {
   addOutlet,
   addOutletFeatures,
@@ -22,6 +21,7 @@ import {
   type OutletLevels,
   sortedOutlets,
 } from './outlet-cells.ts';
+import type { TerrainInputs } from './terrain-inputs.ts';
 import type { TerrainStore } from './terrain-store.ts';
 import { isTypedPlace, typedCell } from './typed-place.ts';
 
@@ -39,13 +39,16 @@ export interface Brimful {
  * Reads the terrain, surveys it and fills it to the brim, by the inputs of terrain-inputs.ts.
  * @throws OverbrimError `no-outlet` when no water can leave anywhere; and what reading and outlets throw.
  */
-export async function brimful(inputs: Inputs, context: JobContext, store: TerrainStore): Promise<Brimful> {
+export async function brimful(
+  inputs: TerrainInputs,
+  context: JobContext,
+  store: TerrainStore,
+): Promise<Brimful> {
   const terrain = await terrainOf(inputs, context, store);
   recordTerrain(terrain, context);
   const { grid } = terrain;
   const rules = await outletRules(inputs, terrain, store);
-  const neighbours = inputs.neighbours as Neighbours;
-  const survey = await store.survey(terrain, neighbours, outletPits(grid, rules.cells), context);
+  const survey = await store.survey(terrain, inputs.neighbours, outletPits(grid, rules.cells), context);
   await context.breathe();
   const outlets = outletSills(grid, survey, rules);
   if (outlets.elevationM.length === 0) {
@@ -68,25 +71,26 @@ export async function brimful(inputs: Inputs, context: JobContext, store: Terrai
 }
 
 /** The terrain that the inputs name. */
-export function terrainOf(inputs: Inputs, context: JobContext, store: TerrainStore): Promise<Terrain> {
-  const references = inputs.terrain as readonly string[];
-  return store.terrain(references, inputs.verticalUnit as VerticalUnit | undefined, context);
+export function terrainOf(inputs: TerrainInputs, context: JobContext, store: TerrainStore): Promise<Terrain> {
+  return store.terrain(inputs.terrain, inputs.verticalUnit, context);
 }
 
-async function outletRules(inputs: Inputs, terrain: Terrain, store: TerrainStore): Promise<OutletRules> {
+async function outletRules(
+  inputs: TerrainInputs,
+  terrain: Terrain,
+  store: TerrainStore,
+): Promise<OutletRules> {
   const levels: OutletLevels = new Map();
-  let voids = inputs.voids as OutletRules['voids'];
-  for (const outlet of (inputs.outlets ?? []) as readonly string[]) {
+  let voids: OutletRules['voids'] = inputs.voids;
+  for (const outlet of inputs.outlets ?? []) {
     if (outlet === 'voids') voids = 'all';
     else if (outlet === 'deepest') addOutlet(levels, [deepestCell(terrain.grid)], Number.NEGATIVE_INFINITY);
     else if (isTypedPlace(outlet)) {
-      const cell = await typedCell(terrain, 'outlets', outlet, inputs.crs as string | undefined, store);
+      const cell = await typedCell(terrain, 'outlets', outlet, inputs.crs, store);
       addOutlet(levels, [cell], Number.NEGATIVE_INFINITY);
     } else addOutletFeatures(levels, terrain, outlet, await store.text(outlet));
   }
-  const edges = inputs.edges as OutletRules['edges'];
-  const gaps = inputs.gaps as OutletRules['gaps'];
-  return { edges, voids, gaps, cells: sortedOutlets(levels) };
+  return { edges: inputs.edges, voids, gaps: inputs.gaps, cells: sortedOutlets(levels) };
 }
 
 function recordTerrain(terrain: Terrain, context: JobContext): void {

@@ -1,4 +1,4 @@
-import type { JobContext, Process, ProcessDescription } from '../host/index.ts';
+import { defineProcess, type JobContext } from '../host/index.ts';
 import { cloudOptimizedGeoTiff } from '../raster/write-cog.ts';
 import { brimLevelRaster } from './brim-raster.ts';
 import { brimful } from './brimful.ts';
@@ -7,7 +7,7 @@ import { keptPonds, pondFeatures, pourPointFeatures } from './pond-features.ts';
 import { terrainInputs } from './terrain-inputs.ts';
 import type { TerrainStore } from './terrain-store.ts';
 
-const description: ProcessDescription = {
+const description = {
   id: 'depressions',
   version: '1.0.0',
   title: 'Find ponds and where they overflow',
@@ -72,18 +72,18 @@ const description: ProcessDescription = {
       schema: { type: 'object', contentMediaType: 'application/json' },
     },
   },
-};
+} as const;
 
 /** Ponds, pour points and brim level of a terrain; see depressions.md. */
-export const depressions: Process<TerrainStore> = {
+export const depressions = defineProcess({
   description,
-  async run(inputs, context, store) {
+  async run(inputs, context, store: TerrainStore) {
     const analysis = await brimful(inputs, context, store);
-    const nested = inputs.nested === true;
+    const nested = inputs.nested;
     const kept = keptPonds(analysis, {
-      depthM: inputs.minDepth as number,
-      areaM2: inputs.minArea as number,
-      capacityM3: inputs.minCapacity as number,
+      depthM: inputs.minDepth,
+      areaM2: inputs.minArea,
+      capacityM3: inputs.minCapacity,
       nested,
     });
     context.progress(0.9, 'writing brim levels');
@@ -98,7 +98,7 @@ export const depressions: Process<TerrainStore> = {
       summary: { json: summaryOf(analysis) },
     };
   },
-};
+});
 
 function summaryOf({
   grid,

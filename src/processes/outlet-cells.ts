@@ -25,7 +25,7 @@ export function deepestCell({ elevationM }: Terrain['grid']): number {
   let deepest = -1;
   for (let cell = 0; cell < elevationM.length; cell++) {
     const z = elevationM[cell];
-    if (z === z && (deepest < 0 || z < elevationM[deepest])) deepest = cell;
+    if (!Number.isNaN(z) && (deepest < 0 || z < elevationM[deepest])) deepest = cell;
   }
   return deepest;
 }

@@ -1,6 +1,6 @@
 import type { Feature, Position } from 'geojson';
 import { spillPath as coreSpillPath, distanceM, type SpillLeg, type SpillPath } from '../core/index.ts';
-import type { Json, Process, ProcessDescription } from '../host/index.ts';
+import { defineProcess, type Json } from '../host/index.ts';
 import { cellCentre } from '../raster/place.ts';
 import { toCrs84 } from '../raster/transform.ts';
 import { type Brimful, brimful, terrainOf } from './brimful.ts';
@@ -10,7 +10,7 @@ import { terrainInputs } from './terrain-inputs.ts';
 import type { TerrainStore } from './terrain-store.ts';
 import { typedCell } from './typed-place.ts';
 
-const description: ProcessDescription = {
+const description = {
   id: 'spill-path',
   version: '1.0.0',
   title: 'Trace where water runs and overflows',
@@ -40,16 +40,15 @@ const description: ProcessDescription = {
       schema: { type: 'object', contentMediaType: 'application/json' },
     },
   },
-};
+} as const;
 
 /** The way of the overflow from a place; see spill-path.md. */
-export const spillPath: Process<TerrainStore> = {
+export const spillPath = defineProcess({
   description,
-  async run(inputs, context, store) {
+  async run(inputs, context, store: TerrainStore) {
     // A place outside the terrain should be told before the survey, not after it.
     const terrain = await terrainOf(inputs, context, store);
-    const crs = inputs.crs as string | undefined;
-    const start = await typedCell(terrain, 'from', inputs.from as string, crs, store);
+    const start = await typedCell(terrain, 'from', inputs.from, inputs.crs, store);
     const analysis = await brimful(inputs, context, store);
     const { grid, survey, drainage, depressions } = analysis;
     context.progress(0.9, 'tracing the path');
@@ -65,7 +64,7 @@ export const spillPath: Process<TerrainStore> = {
       'long-section': { json: longSection(analysis, path) },
     };
   },
-};
+});
 
 function* legFeatures(analysis: Brimful, path: SpillPath): Generator<Feature> {
   const { survey, drainage, depressions, measures, terrain } = analysis;

@@ -1,4 +1,4 @@
-import type { InputDescription } from '../host/index.ts';
+import type { InputDescription, InputsOf } from '../host/index.ts';
 
 /** Inputs that every process on a terrain takes: the elevation, and where its water may leave. */
 export const terrainInputs = {
@@ -58,3 +58,6 @@ export const terrainInputs = {
     minOccurs: 0,
   },
 } as const satisfies Record<string, InputDescription>;
+
+/** Their values after checking. */
+export type TerrainInputs = InputsOf<typeof terrainInputs>;
