@@ -66,7 +66,8 @@ async function read(sources: readonly ByteSource[], options: OpenOptions): Promi
   const elevationM = await paintedElevations(plan, tasks, options);
   const parts = partsIn(plan);
   const gaps = gapsBetween(parts);
-  const grid = gridFor(files[0], plan, elevationM, gaps);
+  const rects = gaps.map(({ column, row, width, height }) => ({ column, row, width, height }));
+  const grid = gridFor(files[0], plan, elevationM, rects);
   const georeference = georeferenceFor(files[0], plan);
   notices.push(...gaps.map((gap) => gapNotice(gap, georeference)));
   notices.push(...seamSteps(parts, grid.elevationM, grid.width).map(seamNotice));
@@ -152,6 +153,7 @@ async function paintedElevations(
       progress?.(painted / total);
     });
   }
+  stopIfCancelled(signal);
   return elevationM;
 }
 

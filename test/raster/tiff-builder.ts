@@ -61,9 +61,12 @@ export function tiffBytes(spec: TiffSpec): Uint8Array {
   const little = spec.littleEndian ?? true;
   const big = spec.big ?? false;
   const out: number[] = [];
-  const put = (value: number, bytes: number): void => {
+  const digitsOf = (value: number, bytes: number): number[] => {
     const digits = Array.from({ length: bytes }, (_, i) => Number((BigInt(value) >> BigInt(8 * i)) & 255n));
-    out.push(...(little ? digits : digits.reverse()));
+    return little ? digits : digits.reverse();
+  };
+  const put = (value: number, bytes: number): void => {
+    out.push(...digitsOf(value, bytes));
   };
   out.push(...(little ? [73, 73] : [77, 77]));
   put(big ? 43 : 42, 2);
@@ -75,9 +78,7 @@ export function tiffBytes(spec: TiffSpec): Uint8Array {
   let pointer = out.length;
   put(0, word);
   const patch = (at: number, value: number): void => {
-    const end = out.splice(at);
-    put(value, word);
-    out.push(...end.slice(word));
+    for (const [i, digit] of digitsOf(value, word).entries()) out[at + i] = digit;
   };
   let first = 0;
   for (const [i, image] of [spec, ...(spec.overviews ?? [])].entries()) {
