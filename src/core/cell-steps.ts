@@ -1,7 +1,10 @@
 import type { Grid, Neighbours } from './grid.ts';
 import { columnStep, rowStep, sideBits } from './saddles.ts';
 
-/** Row-major indices of a cell's neighbours inside the grid, in row order; across the seam where it wraps. */
+/**
+ * Row-major indices of a cell's neighbours inside the grid, in row order; across the seam where it wraps. On a row
+ * that lies on a pole the others of the row touch it too (cellsOfPole).
+ */
 export function neighboursOf(grid: Grid, neighbours: Neighbours, cell: number): number[] {
   const { width, height, frame } = grid;
   const row = Math.floor(cell / width);
@@ -15,6 +18,15 @@ export function neighboursOf(grid: Grid, neighbours: Neighbours, cell: number): 
     if (r >= 0 && r < height && c >= 0 && c < width) found.push(r * width + c);
   }
   return found;
+}
+
+/** All cells of a row that lies on a pole, where they are one place and so all touch; none for a cell elsewhere. */
+export function cellsOfPole(grid: Grid, cell: number): number[] {
+  const { width, height, frame } = grid;
+  const row = Math.floor(cell / width);
+  const isPole =
+    (row === 0 && frame.north === 'pole-row') || (row === height - 1 && frame.south === 'pole-row');
+  return isPole ? Array.from({ length: width }, (_, column) => row * width + column) : [];
 }
 
 /** Distance between two cells' centres by the cell sizes of their rows, metres; the short way round where it wraps. */

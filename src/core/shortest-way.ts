@@ -1,4 +1,4 @@
-import { distanceM, neighboursOf } from './cell-steps.ts';
+import { cellsOfPole, distanceM, neighboursOf } from './cell-steps.ts';
 import type { Grid, Neighbours } from './grid.ts';
 
 /**
@@ -17,6 +17,7 @@ export function shortestWay(
   const distance = new Map<number, number>([[from, 0]]);
   const before = new Map<number, number>();
   const settled = new Set<number>();
+  const poles = new Set<number>();
   const queue = new Queue();
   queue.push(remaining(from), from);
   for (let cell = queue.pop(); cell !== undefined; cell = queue.pop()) {
@@ -24,7 +25,14 @@ export function shortestWay(
     settled.add(cell);
     if (cell === to) return wayBack(before, to);
     const sofar = distance.get(cell) ?? 0;
-    for (const next of neighboursOf(grid, neighbours, cell)) {
+    const near = neighboursOf(grid, neighbours, cell);
+    const pole = poles.has(cell) ? [] : cellsOfPole(grid, cell);
+    // The first cell of a pole reaches all others at no distance, so the others need not look again.
+    for (const other of pole) {
+      poles.add(other);
+      if (other !== cell && !near.includes(other)) near.push(other);
+    }
+    for (const next of near) {
       if (settled.has(next) || (next !== to && !allows(next))) continue;
       const length = sofar + distanceM(grid, cell, next);
       const known = distance.get(next);

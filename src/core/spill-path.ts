@@ -71,40 +71,46 @@ export function spillPath(
       legs.push(dryEnd(grid, field, land));
       return { legs, end: 'no-way' };
     }
-    if (elevationM[cell] > level) {
+    const wet = isWet(leaf);
+    // A dry cell at the very level of the pond below still runs down to its water.
+    if (elevationM[cell] > level || (wet && elevationM[cell] === level)) {
       cell = field.receiver(cell);
       land.push(cell);
       continue;
     }
-    const wet = isWet(leaf);
     const pond = wet ? outermost[leaf] : -1;
     const sill = wet ? depressions.pourSill[pond] : drainage.sill[leaf];
     const exit = drainage.sill[tree.sillLeaf[sill]] === sill ? tree.sillLeaf[sill] : tree.otherLeaf[sill];
     const exitIsSill = tree.sillLeaf[sill] === exit;
     const last = exitIsSill ? tree.sillCell[sill] : tree.otherCell[sill];
     const beyond = exitIsSill ? tree.otherCell[sill] : tree.sillCell[sill];
-    const inside = (c: number): boolean => {
+    const isWater = (c: number): boolean => {
       const l = survey.leaf[c];
-      if (l < 0 || elevationM[c] > level) return false;
-      return wet ? isWet(l) && outermost[l] === pond : l === leaf;
+      return l >= 0 && elevationM[c] < level && isWet(l) && outermost[l] === pond;
     };
-    const way = shortestWay(grid, survey.neighbours, cell, last, inside);
-    if (way === undefined) {
+    const isLevel = (c: number): boolean => survey.leaf[c] === exit && elevationM[c] === level;
+    // Between the water and the pour point there may be level ground, which is land.
+    let shore = wet ? last : cell;
+    while (wet && elevationM[shore] >= level) shore = field.receiver(shore);
+    const water = wet ? shortestWay(grid, survey.neighbours, cell, shore, isWater) : [cell];
+    const terrace = shortestWay(grid, survey.neighbours, shore, last, isLevel);
+    if (water === undefined || terrace === undefined) {
       throw new OverbrimError(
         'failed',
         `No way was found through water at ${level} m from cell ${cell} to its pour point, cell ${last}; this is a fault of the program, please report it with the terrain.`,
       );
     }
-    const ends = drainage.towards[exit] === outside;
+    const way = [...water, ...terrace.slice(1)];
     if (!exitIsSill) way.push(beyond);
     if (wet) {
+      const pondCells = way.slice(0, water.length + 1);
       add('land', -1, land);
-      add('pond', pond, way);
-      land = [way[way.length - 1]];
+      add('pond', pond, pondCells);
+      land = way.slice(pondCells.length - 1);
     } else {
       land.push(...way.slice(1));
     }
-    if (ends) break;
+    if (drainage.towards[exit] === outside) break;
     if (exitIsSill) land.push(beyond);
     cell = beyond;
   }
