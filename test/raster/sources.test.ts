@@ -174,4 +174,20 @@ describe('URLs', () => {
       /^unreadable: hill\.tif has 200 bytes, but a directory should be 2 bytes from byte \d+ on; /,
     );
   });
+
+  test('a server that hides the length: read all the same, and an early end is still seen', async () => {
+    const hiding =
+      (data: Uint8Array): RequestListener =>
+      (request, response) => {
+        const [, from, to] = /^bytes=(\d+)-(\d+)$/.exec(request.headers.range ?? '') ?? [];
+        response.writeHead(206).end(data.subarray(Number(from), Number(to) + 1));
+      };
+    const terrain = await open(await serve(hiding(bytes)));
+    expect(terrain.sha256).toBe((await opened([bytes])).sha256);
+    expect(terrain.files[0].hashOf).toBe('ranges');
+    const url = await serve(hiding(bytes.subarray(0, bytes.length - 10)));
+    expect(await failing(url)).toMatch(
+      /^unreadable: hill\.tif has fewer bytes, but a directory of 15 entries should be 184 bytes from byte \d+ on; /,
+    );
+  });
 });
