@@ -83,23 +83,24 @@ function leavesOf(
   let pits = 0;
   tiles.forEach((tile, t) => {
     pits += tile.pitCell.length;
-    tile.haloCell.forEach((cell, i) => {
+    for (let i = 0; i < tile.haloCell.length; i++) {
+      const cell = tile.haloCell[i];
       const row = Math.floor(cell / grid.width);
       const column = cell - row * grid.width;
       const owner = Math.floor(row / tileSize) * across + Math.floor(column / tileSize);
       const [left, top, width] = tiles[owner].place;
       const label = tiles[owner].label[(row - top) * width + column - left];
       towards[starts[t] + tile.pitCell.length + i] = starts[owner] + label;
-    });
+    }
   });
   const cells = new Float64Array(pits);
   const places = new Int32Array(pits);
   let n = 0;
   tiles.forEach((tile, t) => {
-    tile.pitCell.forEach((cell, p) => {
-      cells[n] = cell;
+    for (let p = 0; p < tile.pitCell.length; p++) {
+      cells[n] = tile.pitCell[p];
       places[n++] = starts[t] + p;
-    });
+    }
   });
   const leaf = new Int32Array(towards.length);
   stableOrder(pits, keyHalves(cells)).forEach((at, i) => {
@@ -205,16 +206,16 @@ function fillLeaves(
   const areaLowM2 = new Float64Array(metrics.uniform ? 0 : out.areaM2.length);
   tiles.forEach((tile, t) => {
     const start = starts[t];
-    tile.pitCell.forEach((cell, p) => {
-      out.pitCell[leaf[start + p]] = cell;
+    for (let p = 0; p < tile.pitCell.length; p++) {
+      out.pitCell[leaf[start + p]] = tile.pitCell[p];
       out.pitElevationM[leaf[start + p]] = tile.pitElevationM[p];
-    });
-    tile.cells.forEach((count, l) => {
-      out.cells[leaf[start + l]] += count;
-      if (metrics.uniform) return;
+    }
+    for (let l = 0; l < tile.cells.length; l++) {
+      out.cells[leaf[start + l]] += tile.cells[l];
+      if (metrics.uniform) continue;
       out.areaM2[leaf[start + l]] += tile.areaHighM2[l];
       areaLowM2[leaf[start + l]] += tile.areaLowM2[l];
-    });
+    }
     const [left, top, width, height] = tile.place;
     for (let r = 0; r < height; r++) {
       const to = (top + r) * grid.width + left;

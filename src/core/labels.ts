@@ -1,4 +1,5 @@
-import { type Receivers, voidMark } from './receivers.ts';
+import { voidMark } from './descend.ts';
+import type { Receivers } from './receivers.ts';
 import type { TileWindow } from './tile-window.ts';
 
 /** Label of a void cell and of a halo position that nothing refers to. */

@@ -15,7 +15,7 @@ export interface SurveyOptions {
   readonly tileOrder?: readonly number[];
 }
 
-/** Largest side of a tile: its candidates must fit the sort key (see tile-sills.ts). */
+/** Largest side of a tile; larger ones only cost memory and fall out of the processor's cache. */
 export const largestTile = 512;
 const usualTile = 256;
 

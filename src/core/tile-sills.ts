@@ -1,5 +1,7 @@
+import { steps } from './descend.ts';
 import { haloLabel, type Labels } from './labels.ts';
-import { type Receivers, steps } from './receivers.ts';
+import { orderedKeys, stableOrder } from './order.ts';
+import type { Receivers } from './receivers.ts';
 import { sideBits } from './saddles.ts';
 import { cellAt, type TileWindow } from './tile-window.ts';
 import { UnionFind } from './union-find.ts';
@@ -18,24 +20,19 @@ export interface TileSills {
   readonly otherLabel: Int32Array;
 }
 
-/** Candidates of one tile that a sort key has room for: elevation takes 32 of its 53 bits. */
-const sequenceRoom = 2 ** 21;
-
-/** Buffers for one tile size. */
+/** Buffers for one tile size, grown when a tile needs more. */
 export interface SillRoom {
-  readonly keys: Float64Array;
-  readonly sill: Int32Array;
-  readonly other: Int32Array;
+  sill: Int32Array;
+  other: Int32Array;
 }
 
 export function sillRoom(cells: number): SillRoom {
-  const most = Math.min(sequenceRoom, cells * 8);
-  return { keys: new Float64Array(most), sill: new Int32Array(most), other: new Int32Array(most) };
+  return { sill: new Int32Array(cells), other: new Int32Array(cells) };
 }
 
 /**
  * Candidates come from cells that passed the saddle test, in the total order of sills by construction, but for
- * their elevation; sorting by (elevation, sequence) gives the total order, and Kruskal (1956) the forest. A
+ * their elevation; a stable sort by elevation gives the total order, and Kruskal (1956) the forest. A
  * heaviest edge of a cycle is never needed again, whatever is joined, added or declared an outlet later.
  */
 export function tileSills(
@@ -44,15 +41,17 @@ export function tileSills(
   labels: Labels,
   room: SillRoom,
 ): TileSills {
-  const { keys, sill, other } = room;
   const { label } = labels;
   const count = candidates(window, receivers, labels, room);
-  const sorted = keys.subarray(0, count).sort();
+  const { sill, other } = room;
+  const elevationM = new Float32Array(count);
+  for (let k = 0; k < count; k++) elevationM[k] = window.elevationM[sill[k]];
+  const sorted = stableOrder(count, [orderedKeys(elevationM)]);
   const sets = new UnionFind(labels.pitCount + labels.halo.length);
   let kept = 0;
   const keptAt = new Int32Array(count);
   for (let k = 0; k < count; k++) {
-    const at = sorted[k] % sequenceRoom;
+    const at = sorted[k];
     const a = sets.root(label[sill[at]]);
     const b = sets.root(label[other[at]]);
     if (a === b) continue;
@@ -68,7 +67,7 @@ export function tileSills(
   };
   for (let k = 0; k < kept; k++) {
     const at = keptAt[k];
-    sills.elevationM[k] = window.elevationM[sill[at]];
+    sills.elevationM[k] = elevationM[at];
     sills.sillCell[k] = cellAt(sill[at], window.tile, window.grid);
     sills.otherCell[k] = cellAt(other[at], window.tile, window.grid);
     sills.sillLabel[k] = label[sill[at]];
@@ -77,25 +76,23 @@ export function tileSills(
   return sills;
 }
 
-/** Fills the room with candidates and their sort keys and returns how many there are. */
+/** Fills the room with candidates and returns how many there are. */
 function candidates(window: TileWindow, receivers: Receivers, labels: Labels, room: SillRoom): number {
-  const { tile, grid, elevationM: z, neighbours } = window;
-  const { saddles, saddleCount, saddleMasks } = receivers;
+  const { tile, grid, neighbours } = window;
+  const { saddles, saddleCount, lower: lowerMask } = receivers;
   const { label } = labels;
   const step = steps(tile.width + 2);
-  const bits = new Int32Array(z.buffer, z.byteOffset, z.length);
   let count = 0;
   const lower: number[] = [];
   for (let s = 0; s < saddleCount; s++) {
     const position = saddles[s];
-    const mask = neighbours === 8 ? saddleMasks[s] : saddleMasks[s] & sideBits;
+    const mask = neighbours === 8 ? lowerMask[position] : lowerMask[position] & sideBits;
     const own = label[position];
     lower.length = 0;
     for (let k = 0; k < 8; k++) if ((mask >> k) & 1) lower.push(position + step[k]);
     // Across the seam of a wrapped grid the order of neighbours is not that of their row-major indices.
     if (grid.wraps && lower.length > 1) lower.sort((a, b) => cellAt(a, tile, grid) - cellAt(b, tile, grid));
-    const b = bits[position];
-    const ordered = (b < 0 ? ~b : b | 0x80000000) >>> 0;
+    if (count + 8 > room.sill.length) grow(room);
     const first = count;
     for (const n of lower) {
       const there = label[n] < 0 ? haloLabel(labels, n) : label[n];
@@ -104,9 +101,17 @@ function candidates(window: TileWindow, receivers: Receivers, labels: Labels, ro
       if (known) continue;
       room.sill[count] = position;
       room.other[count] = n;
-      room.keys[count] = ordered * sequenceRoom + count;
       count++;
     }
   }
   return count;
+}
+
+/** Room for twice as many candidates. */
+function grow(room: SillRoom): void {
+  for (const name of ['sill', 'other'] as const) {
+    const larger = new Int32Array(room[name].length * 2 + 8);
+    larger.set(room[name]);
+    room[name] = larger;
+  }
 }

@@ -1,5 +1,5 @@
+import { steps } from './descend.ts';
 import type { Labels } from './labels.ts';
-import { steps } from './receivers.ts';
 import { columnStep, rowStep, sideBits } from './saddles.ts';
 import { cellAt, type TileWindow } from './tile-window.ts';
 
