@@ -1,4 +1,5 @@
 import { brimLevels } from '../core/index.ts';
+import { keysInMetres } from '../raster/geo-tags.ts';
 import type { RasterOut } from '../raster/raster-out.ts';
 import type { Terrain } from '../raster/terrain.ts';
 import type { Brimful } from './brimful.ts';
@@ -8,11 +9,12 @@ const noData = Number.NaN;
 
 /** The brim level of each cell on the grid and CRS of the input, a dropped last column put back. */
 export function brimLevelRaster({ terrain, grid, survey, drainage }: Brimful): RasterOut {
+  const { geoKeys } = terrain.georeference;
   const levels = brimLevels(grid, survey, drainage);
   return {
     ...restored(terrain, levels),
     noData,
-    georeference: terrain.georeference,
+    georeference: { ...terrain.georeference, geoKeys: keysInMetres(geoKeys, terrain.verticalUnit) },
     metadata: {
       description: 'Brim level: elevation to which water fills the terrain before it overflows to an outlet',
       unit: 'm',
