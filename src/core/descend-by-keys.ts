@@ -1,5 +1,5 @@
 import { lowestBit, pitMark, setInverseDistances, steps, voidMark } from './descend.ts';
-import type { ReceiverRoom } from './receivers.ts';
+import type { ReceiverRoom } from './receiver-room.ts';
 import { sideBits } from './saddles.ts';
 import type { TileWindow } from './tile-window.ts';
 

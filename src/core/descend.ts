@@ -1,4 +1,4 @@
-import type { ReceiverRoom } from './receivers.ts';
+import type { ReceiverRoom } from './receiver-room.ts';
 import { columnStep, rowStep, sideBits } from './saddles.ts';
 import type { TileWindow } from './tile-window.ts';
 

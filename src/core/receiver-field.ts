@@ -1,5 +1,6 @@
 import type { Grid, Neighbours } from './grid.ts';
-import { receiverRoom, receiversOf } from './receivers.ts';
+import { receiverRoom } from './receiver-room.ts';
+import { receiversOf } from './receivers.ts';
 import { cellAt, shapeOf, type Tile, tileWindow } from './tile-window.ts';
 
 const side = 32;

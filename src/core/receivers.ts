@@ -1,5 +1,6 @@
 import { descend, descendAtSeam, pitMark } from './descend.ts';
 import { descendByKeys } from './descend-by-keys.ts';
+import type { ReceiverRoom } from './receiver-room.ts';
 import { arcCounts } from './saddles.ts';
 import type { TileWindow } from './tile-window.ts';
 
@@ -15,25 +16,6 @@ export interface Receivers {
   /** Window positions of cells that may be sills, row by row; `saddleCount` of them. */
   readonly saddles: Int32Array;
   readonly saddleCount: number;
-}
-
-/** Buffers for one tile size, to be used again for each tile. */
-export interface ReceiverRoom {
-  readonly to: Int32Array;
-  readonly lower: Uint8Array;
-  readonly pits: Int32Array;
-  readonly saddles: Int32Array;
-  readonly keys: Int32Array;
-}
-
-export function receiverRoom(cells: number): ReceiverRoom {
-  return {
-    to: new Int32Array(cells),
-    lower: new Uint8Array(cells),
-    pits: new Int32Array(cells),
-    saddles: new Int32Array(cells),
-    keys: new Int32Array(cells),
-  };
 }
 
 const arcs = { 4: arcCounts(4), 8: arcCounts(8) };
