@@ -1,6 +1,6 @@
 import { highSlice, lowSlice, sliceConstant } from './exact-sum.ts';
 import { type Labels, labelsOf } from './labels.ts';
-import { allocatePacked, type Sections } from './packed.ts';
+import { allocatePacked, type Sections, viewPacked } from './packed.ts';
 import { type ReceiverRoom, receiverRoom } from './receiver-room.ts';
 import { receiversOf } from './receivers.ts';
 import { type SillRoom, sillRoom, tileSills } from './tile-sills.ts';
@@ -165,6 +165,11 @@ export function surveyTile(window: TileWindow, room: TileRoom): TileSurvey {
     sections.besideElevationM[i] = z[position];
   });
   return { buffer, ...sections };
+}
+
+/** A tile survey from its buffer. @throws OverbrimError `unreadable` on another kind or version. */
+export function viewTileSurvey(buffer: ArrayBuffer): TileSurvey {
+  return { buffer, ...viewPacked(buffer, kind, layout) };
 }
 
 function sumCatchments(window: TileWindow, sections: Sections<typeof layout>): void {
