@@ -21,7 +21,14 @@ export const packagedEpsg: EpsgLookup = async (code) => {
     const path = `epsg-index/s/${code}.json`;
     const module: { default: EpsgEntry } = await import(/* @vite-ignore */ path, { with: { type: 'json' } });
     return module.default;
-  } catch {
-    return null;
+  } catch (error) {
+    // Only a missing file means that there is no such code; anything else is a fault to be seen.
+    if (
+      /cannot find|not found|failed to (fetch|load|resolve)|unknown variable dynamic import/i.test(
+        String(error),
+      )
+    )
+      return null;
+    throw error;
   }
 };

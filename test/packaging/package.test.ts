@@ -54,6 +54,13 @@ describe('a program that installed the package', () => {
     }
   });
 
+  test('finds a CRS by its EPSG code', () => {
+    const script =
+      "import { crsFromEpsg } from 'overbrim/raster'; console.log((await crsFromEpsg(32710)).name)";
+    const { stdout } = user.node('--input-type=module', '--eval', script);
+    expect(stdout.trim()).toBe('WGS 84 / UTM zone 10S');
+  });
+
   test('can run the command', () => {
     const command = join(user.packageFolder, user.manifest.bin.overbrim ?? '');
     expect(readFileSync(command, 'utf8')).toMatch(/^#!\/usr\/bin\/env node\n/);
