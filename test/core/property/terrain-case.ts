@@ -98,7 +98,8 @@ export function terrainCases(most: CaseSize, options: { plain?: boolean } = {}):
         for (const cell of cellsOfGap(gap, width)) z[cell] = none;
         const allVoid = z.every((value) => Number.isNaN(value));
         if (allVoid) z[0] = 1;
-        const [north, south] = plain ? (['beyond', 'beyond'] as const) : draw.sides;
+        // A single row cannot lie on both poles.
+        const [north, south] = plain || height === 1 ? (['beyond', 'beyond'] as const) : draw.sides;
         return {
           width,
           height,
@@ -147,13 +148,14 @@ export function gridOfCase(terrain: TerrainCase): Grid {
   return gridOf(width, height, Float32Array.from(z), metricsOfCase(terrain), frame, gaps);
 }
 
-export function metricsOfCase({ height, width, metrics, north }: TerrainCase): RowMetrics {
+export function metricsOfCase({ height, width, metrics, north, south }: TerrainCase): RowMetrics {
   if (metrics === 'square') return projectedMetrics(height, 1, 1);
   if (metrics === 'oblong') return projectedMetrics(height, 1.5, 0.7);
-  // A row on the pole is centred there and so starts half a cell beyond it.
-  const step = 150 / Math.max(height, 2);
-  const top = north === 'pole-row' ? 90 + step / 2 : 85;
-  return geographicMetrics(height, top, 360 / width, step);
+  // A row on a pole is centred there and so reaches half a cell beyond it.
+  const onPoles = Number(north === 'pole-row') + Number(south === 'pole-row');
+  const step = onPoles === 2 ? 180 / (height - 1) : 150 / Math.max(height, 2);
+  const farthest = south === 'pole-row' ? -90 - step / 2 + height * step : 85;
+  return geographicMetrics(height, north === 'pole-row' ? 90 + step / 2 : farthest, 360 / width, step);
 }
 
 export function rulesOfCase({ edges, voids, gaps, outlets }: TerrainCase): OutletRules {
