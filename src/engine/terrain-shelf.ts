@@ -24,6 +24,7 @@ const mostTextBytes = 256 * 2 ** 20;
 export class TerrainShelf implements TerrainStore {
   readonly #reach: Reach;
   readonly #terrains = new Map<string, Terrain>();
+  readonly #made = new WeakMap<Terrain, { key: string; value: unknown }>();
   readonly #surveys = new WeakMap<Terrain, Map<string, Survey>>();
 
   constructor(reach: Reach) {
@@ -91,6 +92,14 @@ export class TerrainShelf implements TerrainStore {
       context.progress(readingShare + surveyShare * step.value, 'surveying catchments');
       await context.breathe();
     }
+  }
+
+  async kept<T>(terrain: Terrain, key: string, make: () => Promise<T>): Promise<T> {
+    const held = this.#made.get(terrain);
+    if (held?.key === key) return held.value as T;
+    const value = await make();
+    this.#made.set(terrain, { key, value });
+    return value;
   }
 
   crs(code: number): Promise<Crs> {

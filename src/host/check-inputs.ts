@@ -19,7 +19,7 @@ export function checkedInputs(
   given: Readonly<Record<string, Json>>,
 ): Inputs {
   for (const name of Object.keys(given)) {
-    if (description.inputs[name] === undefined) {
+    if (!Object.hasOwn(description.inputs, name)) {
       const known = Object.keys(description.inputs).join(', ');
       throw new OverbrimError(
         'bad-input',
@@ -29,7 +29,7 @@ export function checkedInputs(
   }
   const checked: Record<string, Json> = {};
   for (const [name, input] of Object.entries(description.inputs)) {
-    const value = given[name];
+    const value = Object.hasOwn(given, name) ? given[name] : undefined;
     if (value === undefined) {
       if (isRequired(input)) {
         throw new OverbrimError(

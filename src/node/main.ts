@@ -1,13 +1,12 @@
 import { Command, CommanderError } from 'commander';
 import { OverbrimError } from '../core/index.ts';
 import { builtInProcesses, TerrainShelf } from '../engine/index.ts';
-import type { Process } from '../host/index.ts';
+import { type Process, software } from '../host/index.ts';
 import { caution, type TerrainStore } from '../processes/index.ts';
 import { descriptionText } from './description-text.ts';
-import { addProcessOptions, type GivenOptions, inputsOf } from './process-options.ts';
+import { addProcessOptions, type GivenOptions, inputsOf, shielded } from './process-options.ts';
 import { reachFiles } from './reach-files.ts';
 import { type RunReport, runProcess } from './run-process.ts';
-import { software } from './software.ts';
 import type { Terminal } from './terminal.ts';
 
 /** Exit codes of the command line. */
@@ -43,13 +42,25 @@ export async function main(args: readonly string[], terminal: Terminal): Promise
     .description('describe a process, as OGC API – Processes JSON')
     .argument('<process>', 'its id')
     .option('--text', 'for reading')
+    .option('--json', 'as JSON, as without options')
     .action((id: string, { text }: { text?: boolean }) => {
       const { description } = registry.get(id);
       terminal.stdout.write(
         text === true ? descriptionText(description) : `${JSON.stringify(description, null, 2)}\n`,
       );
     });
-  const run = program.command('run').description('run a process and write its results into a folder');
+  const run = program
+    .command('run')
+    .description('run a process and write its results into a folder')
+    .action(() => {
+      throw new OverbrimError(
+        'bad-input',
+        `No process was named; expected run ${registry
+          .list()
+          .map(({ description }) => description.id)
+          .join(' or ')}.`,
+      );
+    });
   for (const process of registry.list()) {
     const command = run.command(process.description.id).description(process.description.title);
     addProcessOptions(command, process.description);
@@ -67,7 +78,8 @@ export async function main(args: readonly string[], terminal: Terminal): Promise
   }
   try {
     if (args.length === 0) program.help();
-    await program.parseAsync([...args], { from: 'user' });
+    if (args[0] === 'run' && args.length > 1 && !args[1].startsWith('-')) registry.get(args[1]);
+    await program.parseAsync(args.map(shielded), { from: 'user' });
     return exitCodes.done;
   } catch (error) {
     return explain(error, asJson, terminal);

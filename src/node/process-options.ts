@@ -23,6 +23,11 @@ export function addProcessOptions(command: Command, { inputs }: ProcessDescripti
   command.option('--input <name=value...>', 'any input by its name, as name=value');
 }
 
+/** Coordinates that start with a minus, given a space in front so that they are not taken for options. */
+export function shielded(arg: string): string {
+  return /^-[\d.][^,]*,/.test(arg) ? ` ${arg}` : arg;
+}
+
 /** Inputs of a process from its options and from `--input name=value`. */
 export function inputsOf(description: ProcessDescription, given: GivenOptions): Record<string, Json> {
   const inputs: Record<string, Json> = {};
@@ -38,7 +43,7 @@ export function inputsOf(description: ProcessDescription, given: GivenOptions): 
   for (const text of named as readonly string[]) {
     const equals = text.indexOf('=');
     const id = text.slice(0, equals);
-    const input = description.inputs[id];
+    const input = Object.hasOwn(description.inputs, id) ? description.inputs[id] : undefined;
     if (equals < 1 || input === undefined) {
       throw new OverbrimError(
         'bad-input',
@@ -76,6 +81,6 @@ function parsed(option: string, { schema, title }: InputDescription, text: strin
         throw new OverbrimError('bad-input', `${option} is not JSON: ${title}.`, { cause });
       }
     default:
-      return text;
+      return text.replace(/^ (?=-)/, '');
   }
 }

@@ -1,6 +1,15 @@
 import { createHash } from 'node:crypto';
-import { existsSync, mkdirSync, readdirSync, readFileSync, renameSync, rmSync, statSync } from 'node:fs';
-import { mkdir, open, rm } from 'node:fs/promises';
+import {
+  existsSync,
+  mkdirSync,
+  readdirSync,
+  readFileSync,
+  renameSync,
+  rmdirSync,
+  rmSync,
+  statSync,
+} from 'node:fs';
+import { type FileHandle, open } from 'node:fs/promises';
 import { dirname, join, resolve } from 'node:path';
 import { OverbrimError } from '../core/index.ts';
 import type { OutputBody } from '../host/index.ts';
@@ -16,20 +25,25 @@ export interface WrittenFile {
 }
 
 /**
- * A folder of results that appears whole or not at all: files are written into a hidden folder beside it and moved
- * when all are there.
+ * A folder of results that appears whole or not at all: files are written into a hidden folder (beside it, or inside
+ * where it exists and may be a disk of its own) and moved when all are there.
  */
 export class ResultFolder {
   readonly path: string;
   readonly #partial: string;
+  /** Folders above the results that were not there before, outermost first. */
+  readonly #made: string[] = [];
+  #begun = false;
 
   /**
    * @throws OverbrimError `bad-input` when the path is a file, or a folder that holds the result of another process.
    */
   constructor(path: string, processId: string) {
     this.path = resolve(path);
-    this.#partial = join(dirname(this.path), `.${process.pid}-${Date.now()}.partial`);
-    if (!existsSync(this.path)) return;
+    const exists = existsSync(this.path);
+    const around = exists ? this.path : dirname(this.path);
+    this.#partial = join(around, `.${process.pid}-${Date.now()}.partial`);
+    if (!exists) return;
     if (!statSync(this.path).isDirectory()) {
       throw new OverbrimError('bad-input', `${path} is a file; give a folder for the results with --out.`);
     }
@@ -42,13 +56,35 @@ export class ResultFolder {
     }
   }
 
+  /**
+   * Makes the hidden folder, so that a place that cannot be written is told before the work and not after it.
+   * @throws OverbrimError `failed` then.
+   */
+  begin(): void {
+    try {
+      // Folder by folder: in some places that take no folders Node's recursive way never comes back.
+      this.#makeAbove(dirname(this.#partial));
+      mkdirSync(this.#partial);
+      this.#begun = true;
+    } catch (error) {
+      throw notWritten(this.path, error);
+    }
+  }
+
+  #makeAbove(folder: string): void {
+    if (existsSync(folder)) return;
+    this.#makeAbove(dirname(folder));
+    mkdirSync(folder);
+    this.#made.push(folder);
+  }
+
   /** Writes one file; `stop` is asked between pieces and throws to end the writing. */
   async write(file: string, body: OutputBody, stop: () => void): Promise<WrittenFile> {
-    await mkdir(this.#partial, { recursive: true });
-    const handle = await open(join(this.#partial, file), 'w');
     const hash = createHash('sha256');
     let bytes = 0;
+    let handle: FileHandle | undefined;
     try {
+      handle = await open(join(this.#partial, file), 'w');
       for (const piece of piecesOf(body)) {
         stop();
         const data = typeof piece === 'string' ? Buffer.from(piece) : piece;
@@ -59,7 +95,7 @@ export class ResultFolder {
     } catch (error) {
       throw error instanceof OverbrimError ? error : notWritten(join(this.path, file), error);
     } finally {
-      await handle.close();
+      await handle?.close();
     }
     return { file, bytes, sha256: hash.digest('hex') };
   }
@@ -68,7 +104,6 @@ export class ResultFolder {
   finish(): void {
     try {
       if (!existsSync(this.path)) {
-        mkdirSync(dirname(this.path), { recursive: true });
         renameSync(this.#partial, this.path);
         return;
       }
@@ -81,14 +116,16 @@ export class ResultFolder {
     }
   }
 
-  /** Removes what was written so far. */
-  async discard(): Promise<void> {
-    await rm(this.#partial, { recursive: true, force: true });
-  }
-
-  /** The same at once, for the end of the process. */
-  discardNow(): void {
-    rmSync(this.#partial, { recursive: true, force: true });
+  /** Removes what was written so far, and the folders made for it unless others use them by now. */
+  discard(): void {
+    if (this.#begun) rmSync(this.#partial, { recursive: true, force: true });
+    for (const folder of this.#made.reverse()) {
+      try {
+        rmdirSync(folder);
+      } catch {
+        return;
+      }
+    }
   }
 }
 

@@ -1,10 +1,9 @@
 import { OverbrimError } from '../core/index.ts';
 import type { TerrainShelf } from '../engine/index.ts';
-import { Job, type Json, mediaTypeOf, type Process } from '../host/index.ts';
+import { Job, type Json, mediaTypeOf, type Process, software } from '../host/index.ts';
 import { caution, type TerrainStore } from '../processes/index.ts';
 import { progressDisplay, silent } from './progress.ts';
 import { ResultFolder, resultFile, type WrittenFile } from './result-folder.ts';
-import { software } from './software.ts';
 import type { Terminal } from './terminal.ts';
 
 /** What a run left behind. */
@@ -43,13 +42,14 @@ export async function runProcess(
     interrupted++;
     job?.dismiss();
     if (interrupted > 1) {
-      folder.discardNow();
+      folder.discard();
       globalThis.process.exit(130);
     }
   };
   terminal.on('SIGINT', interrupt);
   terminal.on('SIGTERM', interrupt);
   try {
+    folder.begin();
     job = new Job(process, inputs, shelf, { software, onProgress: (progress) => display.show(progress) });
     const { outputs, lineage, notes } = await job.result;
     const stop = (): void => {
@@ -75,7 +75,7 @@ export async function runProcess(
     folder.finish();
     return { folder: folder.path, files, notes, values };
   } catch (error) {
-    await folder.discard();
+    folder.discard();
     throw error;
   } finally {
     display.end();

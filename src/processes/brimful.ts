@@ -46,6 +46,19 @@ export async function brimful(
 ): Promise<Brimful> {
   const terrain = await terrainOf(inputs, context, store);
   recordTerrain(terrain, context);
+  const { edges, neighbours, voids, gaps, outlets, crs } = inputs;
+  const key = JSON.stringify(['brimful', edges, neighbours, voids, gaps, outlets ?? [], crs ?? null]);
+  const analysis = await store.kept(terrain, key, () => filledToBrim(terrain, inputs, context, store));
+  noteLandlocked(analysis.survey, analysis.drainage, context);
+  return analysis;
+}
+
+async function filledToBrim(
+  terrain: Terrain,
+  inputs: TerrainInputs,
+  context: JobContext,
+  store: TerrainStore,
+): Promise<Brimful> {
   const { grid } = terrain;
   const rules = await outletRules(inputs, terrain, store);
   const survey = await store.survey(terrain, inputs.neighbours, outletPits(grid, rules.cells), context);
@@ -66,7 +79,6 @@ export async function brimful(
   context.progress(0.85, 'measuring ponds');
   const measures = pondMeasures(grid, survey, drainage, depressions);
   await context.breathe();
-  noteLandlocked(survey, drainage, context);
   return { terrain, grid, survey, drainage, depressions, measures };
 }
 

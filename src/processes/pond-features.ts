@@ -1,10 +1,11 @@
 import type { Feature, Position } from 'geojson';
 import { type Polygon, pondOutlines, spillsInto } from '../core/index.ts';
-import { cellCentre, cornerAt } from '../raster/place.ts';
+import { cornerAt } from '../raster/place.ts';
 import type { Terrain } from '../raster/terrain.ts';
 import { toCrs84 } from '../raster/transform.ts';
 import type { Brimful } from './brimful.ts';
 import { degrees, figure, float32Figure } from './geojson-text.ts';
+import { cellLonLat } from './lon-lat.ts';
 import { pondNames } from './pond-names.ts';
 
 /** Least sizes of ponds that are written. */
@@ -41,8 +42,8 @@ export function* pondFeatures(analysis: Brimful, kept: Uint8Array, nested: boole
     nested,
     cutColumn,
   })) {
-    const spillElevationM = depressions.spillElevationM[node];
-    const pitElevationM = depressions.pitElevationM[node];
+    const spillElevationM = float32Figure(depressions.spillElevationM[node]);
+    const pitElevationM = float32Figure(depressions.pitElevationM[node]);
     const sillCell = drainage.tree.sillCell[depressions.pourSill[node]];
     const id = nameOf(node) ?? '';
     yield {
@@ -55,8 +56,8 @@ export function* pondFeatures(analysis: Brimful, kept: Uint8Array, nested: boole
       properties: {
         id,
         parent: nested ? nameOf(depressions.parent[node]) : null,
-        spillElevationM: float32Figure(spillElevationM),
-        pitElevationM: float32Figure(pitElevationM),
+        spillElevationM,
+        pitElevationM,
         depthM: figure(spillElevationM - pitElevationM),
         areaM2: figure(measures.areaM2[node]),
         capacityM3: figure(measures.capacityM3[node]),
@@ -64,7 +65,7 @@ export function* pondFeatures(analysis: Brimful, kept: Uint8Array, nested: boole
         contributingAreaM2: figure(measures.contributingAreaM2[node]),
         spillsInto: nameOf(into[node]),
         touchesEdge: measures.touchesEdge[node] === 1,
-        heldByOutlet: spillElevationM > grid.elevationM[sillCell],
+        heldByOutlet: depressions.spillElevationM[node] > grid.elevationM[sillCell],
       },
     };
   }
@@ -75,13 +76,13 @@ export function* pourPointFeatures(analysis: Brimful, kept: Uint8Array): Generat
   const { terrain, survey, drainage, depressions } = analysis;
   const nameOf = pondNames(survey, drainage, depressions);
   const into = spillsInto(survey, drainage, depressions, kept);
-  const toLonLat = toCrs84(terrain.georeference.crs);
+  const position = cellLonLat(terrain);
   for (let node = 0; node < kept.length; node++) {
     if (kept[node] === 0) continue;
     const sillCell = drainage.tree.sillCell[depressions.pourSill[node]];
     yield {
       type: 'Feature',
-      geometry: { type: 'Point', coordinates: toLonLat(...cellCentre(terrain, sillCell)).map(degrees) },
+      geometry: { type: 'Point', coordinates: position(sillCell) },
       properties: {
         pond: nameOf(node),
         spillElevationM: float32Figure(depressions.spillElevationM[node]),

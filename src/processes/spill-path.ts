@@ -2,9 +2,9 @@ import type { Feature, Position } from 'geojson';
 import { spillPath as coreSpillPath, distanceM, type SpillLeg, type SpillPath } from '../core/index.ts';
 import { defineProcess, type Json } from '../host/index.ts';
 import { cellCentre } from '../raster/place.ts';
-import { toCrs84 } from '../raster/transform.ts';
 import { type Brimful, brimful, terrainOf } from './brimful.ts';
 import { degrees, featureCollectionText, figure, float32Figure } from './geojson-text.ts';
+import { cellLonLat } from './lon-lat.ts';
 import { pondNames } from './pond-names.ts';
 import { terrainInputs } from './terrain-inputs.ts';
 import type { TerrainStore } from './terrain-store.ts';
@@ -69,12 +69,13 @@ export const spillPath = defineProcess({
 function* legFeatures(analysis: Brimful, path: SpillPath): Generator<Feature> {
   const { survey, drainage, depressions, measures, terrain } = analysis;
   const nameOf = pondNames(survey, drainage, depressions);
-  const toLonLat = toCrs84(terrain.georeference.crs);
-  const position = (cell: number): Position => toLonLat(...cellCentre(terrain, cell)).map(degrees);
+  const position = cellLonLat(terrain);
   let number = 0;
   for (const leg of path.legs) {
     number++;
-    const dropM = leg.fromElevationM - leg.toElevationM;
+    const fromElevationM = float32Figure(leg.fromElevationM);
+    const toElevationM = float32Figure(leg.toElevationM);
+    const dropM = fromElevationM - toElevationM;
     yield {
       type: 'Feature',
       geometry: lineGeometry(leg.cells.map(position)),
@@ -85,8 +86,8 @@ function* legFeatures(analysis: Brimful, path: SpillPath): Generator<Feature> {
         lengthM: figure(leg.lengthM),
         dropM: figure(dropM),
         slope: leg.lengthM > 0 ? figure(dropM / leg.lengthM) : 0,
-        fromElevationM: float32Figure(leg.fromElevationM),
-        toElevationM: float32Figure(leg.toElevationM),
+        fromElevationM,
+        toElevationM,
         storageM3: leg.kind === 'pond' ? figure(measures.capacityM3[leg.pond]) : 0,
         endsAt: number < path.legs.length ? null : path.end,
       },

@@ -20,6 +20,8 @@ export interface TerrainStore {
     madePits: Float64Array,
     context: JobContext,
   ): Promise<Survey>;
+  /** What was made last for this terrain under this key, or what `make` makes; so that a second question is quick. */
+  kept<T>(terrain: Terrain, key: string, make: () => Promise<T>): Promise<T>;
   /** A CRS by its EPSG code. */
   crs(code: number): Promise<Crs>;
   /** A small text file behind a reference, such as outlets as GeoJSON. */
