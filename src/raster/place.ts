@@ -26,8 +26,8 @@ export function gridPosition({ grid, georeference }: Placed, [x, y]: Point): Poi
   let column = (x - georeference.west) / georeference.cellWidth;
   if (georeference.crs.kind === 'geographic') {
     const around = 360 / georeference.cellWidth;
-    while (column < 0 && column + around <= grid.width) column += around;
-    while (column >= grid.width && column - around >= 0) column -= around;
+    const turned = column - around * Math.floor(column / around);
+    if ((column < 0 || column >= grid.width) && turned <= grid.width) column = turned;
   }
   return [column, (georeference.north - y) / georeference.cellHeight];
 }
