@@ -217,11 +217,14 @@ function fillLeaves(
       areaLowM2[leaf[start + l]] += tile.areaLowM2[l];
     }
     const [left, top, width, height] = tile.place;
+    const { label } = tile;
+    const leafOfCell = out.leaf;
     for (let r = 0; r < height; r++) {
       const to = (top + r) * grid.width + left;
+      const from = r * width;
       for (let c = 0; c < width; c++) {
-        const label = tile.label[r * width + c];
-        out.leaf[to + c] = label < 0 ? -1 : leaf[start + label];
+        const l = label[from + c];
+        leafOfCell[to + c] = l < 0 ? -1 : leaf[start + l];
       }
     }
   });

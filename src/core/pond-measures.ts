@@ -73,16 +73,14 @@ function ownStorage(
   const count = spillElevationM.length;
   const areaBound = metrics.uniform ? 1 : metrics.areaBoundM2;
   const areaConstant = sliceConstant(areaBound);
-  const constants = new Float64Array(count);
+  // Four numbers a node, side by side in memory: cells, both slices of the volume, the constant that cuts them.
+  const sums = new Float64Array(count * 4);
   for (let node = 0; node < count; node++) {
     const depth = spillElevationM[node] - pitElevationM[node];
-    if (depth < Number.POSITIVE_INFINITY) constants[node] = sliceConstant(depth * areaBound);
+    if (depth < Number.POSITIVE_INFINITY) sums[node * 4 + 3] = sliceConstant(depth * areaBound);
   }
-  const cells = new Float64Array(count);
-  const areaHigh = new Float64Array(count);
-  const areaLow = new Float64Array(count);
-  const volumeHigh = new Float64Array(count);
-  const volumeLow = new Float64Array(count);
+  const areaHigh = new Float64Array(metrics.uniform ? 0 : count);
+  const areaLow = new Float64Array(metrics.uniform ? 0 : count);
   for (let row = 0; row < height; row++) {
     const area = metrics.uniform ? 1 : metrics.areaM2[row];
     const high = highSlice(area, areaConstant);
@@ -93,21 +91,28 @@ function ownStorage(
       const z = elevationM[cell];
       const level = levelM[l];
       if (!(z < level) || level === Number.POSITIVE_INFINITY) continue;
-      const node = smallestAbove(depressions, tree, l, z);
-      cells[node]++;
+      const node = z < spillElevationM[l] ? l : smallestAbove(depressions, tree, l, z);
+      const at = node * 4;
+      const volume = (spillElevationM[node] - z) * area;
+      const constant = sums[at + 3];
+      const first = highSlice(volume, constant);
+      sums[at]++;
+      sums[at + 1] += first;
+      sums[at + 2] += lowSlice(volume, first, constant);
+      if (metrics.uniform) continue;
       areaHigh[node] += high;
       areaLow[node] += low;
-      const volume = (spillElevationM[node] - z) * area;
-      const first = highSlice(volume, constants[node]);
-      volumeHigh[node] += first;
-      volumeLow[node] += lowSlice(volume, first, constants[node]);
     }
   }
+  const cells = new Float64Array(count);
+  const areaM2 = new Float64Array(count);
+  const capacityM3 = new Float64Array(count);
   for (let node = 0; node < count; node++) {
-    areaHigh[node] += areaLow[node];
-    volumeHigh[node] += volumeLow[node];
+    cells[node] = sums[node * 4];
+    areaM2[node] = metrics.uniform ? cells[node] : areaHigh[node] + areaLow[node];
+    capacityM3[node] = sums[node * 4 + 1] + sums[node * 4 + 2];
   }
-  return { cells, areaM2: areaHigh, capacityM3: volumeHigh };
+  return { cells, areaM2, capacityM3 };
 }
 
 /** What runs to each depression through leaves that no smaller one wets. */
