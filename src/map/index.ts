@@ -1,0 +1,12 @@
+export { checkMap } from './check-map.ts';
+export { type Light, northWestLight } from './hillshade.ts';
+export type { Rgb } from './packed-colour.ts';
+export { type DepthClass, darkPalette, depthClasses, lightPalette, type Palette } from './palette.ts';
+export { PixelCells } from './pixel-cells.ts';
+export type { PondOnView } from './pond-features.ts';
+export { terrainProjection } from './projections.ts';
+export { type ReadOut, readOut } from './read-out.ts';
+export { ReliefLayer } from './relief-layer.ts';
+export { SurveyLayers } from './survey-layers.ts';
+export type { SurveyView } from './survey-view.ts';
+export { WetLayer } from './wet-layer.ts';
