@@ -11,7 +11,7 @@ const table = {
   processes: { core: 'all', hydraulics: 'all', raster: 'all', host: ['index'] },
   engine: { core: 'all', hydraulics: 'all', raster: 'all', host: 'all', processes: 'all' },
   publish: { core: 'types', raster: 'all', host: ['lineage'] },
-  map: { core: 'types', raster: ['crs', 'transform', 'place'] },
+  map: { core: 'types', raster: ['crs', 'transform', 'place', 'terrain'] },
   elements: { map: 'all', host: 'all', engine: ['client'], publish: 'all', core: 'types' },
   node: {
     core: 'all',
@@ -125,7 +125,8 @@ module.exports = {
       from: { path: '^src/' },
       to: {
         dependencyTypes: ['npm-dev', 'npm-no-pkg', 'npm-unknown'],
-        dependencyTypesNot: ['type-only'],
+        // A peer is also installed for our own tests.
+        dependencyTypesNot: ['type-only', 'npm-peer'],
       },
     },
     {

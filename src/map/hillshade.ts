@@ -1,3 +1,4 @@
+import { cellSizes } from './cell-sizes.ts';
 import type { Shade } from './pooled-shade.ts';
 import type { SurveyView } from './survey-view.ts';
 
@@ -22,7 +23,8 @@ const radians = Math.PI / 180;
  * cell's own elevation.
  */
 export function hillshade(survey: SurveyView, light: Light = northWestLight): Shade {
-  const { width, height, wraps, elevationM, eastM, southM } = survey;
+  const { width, height, wraps, elevationM } = survey;
+  const { eastM, southM } = cellSizes(survey);
   const azimuth = light.azimuthDeg * radians;
   const altitude = light.altitudeDeg * radians;
   const up = Math.sin(altitude);

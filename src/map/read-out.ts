@@ -44,7 +44,7 @@ export function readOut(
   if (!(level > groundM && level < Number.POSITIVE_INFINITY)) {
     return { ...place, groundM, waterM: null, depthM: 0, pond: null };
   }
-  const pond = survey.pond[leaf];
+  const pond = survey.pondOfLeaf[leaf];
   return {
     ...place,
     groundM,

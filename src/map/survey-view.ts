@@ -14,10 +14,7 @@ export interface SurveyView {
   /** Brim level of each leaf, metres; +∞ = no way to any outlet. */
   readonly levelM: Float32Array;
   /** Outermost pond of each leaf, a place in `ponds`; −1 = none. */
-  readonly pond: Int32Array;
+  readonly pondOfLeaf: Int32Array;
   /** Ids of ponds, as the process `depressions` writes them. */
   readonly ponds: readonly string[];
-  /** Metres from a cell's centre to its east and its south neighbour, one value a row. */
-  readonly eastM: Float64Array;
-  readonly southM: Float64Array;
 }
