@@ -27,7 +27,9 @@ export function gridPosition({ grid, georeference }: Placed, [x, y]: Point): Poi
   if (georeference.crs.kind === 'geographic') {
     const around = 360 / georeference.cellWidth;
     const turned = column - around * Math.floor(column / around);
-    if ((column < 0 || column >= grid.width) && turned <= grid.width) column = turned;
+    // What is more than two turns away is no longitude.
+    const isNear = Math.abs(column) <= 2 * around;
+    if (isNear && (column < 0 || column >= grid.width) && turned <= grid.width) column = turned;
   }
   return [column, (georeference.north - y) / georeference.cellHeight];
 }
