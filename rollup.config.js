@@ -1,5 +1,17 @@
-import { rmSync } from 'node:fs';
+import { existsSync, readdirSync, rmSync } from 'node:fs';
+import commonjs from '@rollup/plugin-commonjs';
+import nodeResolve from '@rollup/plugin-node-resolve';
 import typescript from '@rollup/plugin-typescript';
+import { elementsManifest } from './.build/elements-manifest.js';
+import { epsgRegister } from './.build/epsg-register.js';
+import { hashes } from './.build/hashes.js';
+import { licences } from './.build/licences.js';
+import { minified } from './.build/minified.js';
+import { partEntry, partFiles, scriptIntro, scriptParts } from './.build/script-parts.js';
+
+const inScripts = licences();
+
+const withElements = existsSync('src/script.ts');
 
 /** What package.json hands on: module in dist → its source. */
 const entries = {
@@ -8,9 +20,21 @@ const entries = {
   'raster/index': 'src/raster/index.ts',
   'host/index': 'src/host/index.ts',
   'processes/index': 'src/processes/index.ts',
+  'engine/client': 'src/engine/client.ts',
+  'engine/worker': 'src/engine/worker.ts',
+  'map/index': 'src/map/index.ts',
   'node/index': 'src/node/index.ts',
   'node/bin': 'src/node/bin.ts',
+  ...(withElements ? { script: 'src/script.ts', ...everyElement() } : {}),
 };
+
+/** Each element is an entry of its own, by class and by definition. */
+function everyElement() {
+  const names = readdirSync('src/elements').filter((file) => file.endsWith('.ts'));
+  return Object.fromEntries(
+    names.map((file) => [`elements/${file.slice(0, -'.ts'.length)}`, `src/elements/${file}`]),
+  );
+}
 
 /** A module that disappears from src must not live on in dist. */
 const emptyFirst = {
@@ -41,7 +65,12 @@ const computedImports = {
   }),
 };
 
-export default {
+function onwarn(warning) {
+  throw new Error(`The build must be free of warnings, and says: ${warning.message}`);
+}
+
+/** ES modules, unbundled, for bundlers and Node. */
+const modules = {
   input: entries,
   // Everything that is not ours stays an import: the page or the package manager provides it once.
   external: (id) => !/^(\.|\/|src\/)/.test(id),
@@ -72,8 +101,54 @@ export default {
     }),
     declarationImports,
     computedImports,
+    epsgRegister,
+    ...(withElements ? [elementsManifest] : []),
   ],
-  onwarn(warning) {
-    throw new Error(`The build must be free of warnings, and says: ${warning.message}`);
-  },
+  onwarn,
 };
+
+/** OpenLayers is the page's own: `ol/layer/Layer.js` is its `ol.layer.Layer`. */
+const isOpenLayers = (id) => /^ol(\/|$)/.test(id);
+const pageGlobal = (id) => id.replace(/\.js$/, '').replace(/\//g, '.');
+
+/** Without this the page would only say that `ol` is not defined. */
+const openLayersFirst = `if (typeof ol === 'undefined' || !ol.layer || !ol.util) throw new Error('overbrim.js finds no OpenLayers on this page; load its full build (ol.js, version 7.5 to 10) by a script tag before overbrim.js.');`;
+
+/** One plain file, from the modules built above. */
+function script(file, input, output, plugins) {
+  return {
+    input,
+    external: isOpenLayers,
+    output: {
+      file: `dist/${file}`,
+      format: 'iife',
+      globals: pageGlobal,
+      externalImportAttributes: false,
+      ...output,
+    },
+    plugins: [...plugins, nodeResolve({ browser: true }), commonjs(), inScripts.gather],
+    onwarn,
+  };
+}
+
+/** A script of our own, small. */
+function ownScript(file, input, output = {}) {
+  return script(file, input, { intro: scriptIntro, sourcemap: true, ...output }, [scriptParts(), minified]);
+}
+
+/** A rarely used package beside the scripts, small already. */
+function part([name, file]) {
+  return script(file, `part:${name}`, {}, [partEntry(name)]);
+}
+
+const builds = [
+  modules,
+  ownScript('overbrim-worker.js', 'dist/engine/worker.js'),
+  ...(withElements
+    ? [ownScript('overbrim.js', 'dist/script.js', { name: 'overbrim', banner: openLayersFirst })]
+    : []),
+  ...Object.entries(partFiles).map(part),
+];
+builds.at(-1).plugins.push(inScripts.write, hashes);
+
+export default builds;
