@@ -13,7 +13,7 @@ export interface CanvasFrame {
   readonly toView: readonly [number, number, number, number, number, number];
 }
 
-/** A part of a device pixel that rounding of page coordinates may cost. */
+/** A part of a CSS pixel that rounding of page coordinates may cost. */
 const exact = 1e-3;
 
 /**
@@ -27,14 +27,15 @@ export function canvasFrame(
   pixelToCoordinate: readonly number[],
   step: number,
 ): CanvasFrame {
-  const x0 = Math.floor(rect.left * devicePixelRatio + exact);
-  const y0 = Math.floor(rect.top * devicePixelRatio + exact);
-  const x1 = Math.ceil((rect.left + rect.width) * devicePixelRatio - exact);
-  const y1 = Math.ceil((rect.top + rect.height) * devicePixelRatio - exact);
-  const width = Math.max(0, Math.ceil((x1 - x0) / step));
-  const height = Math.max(0, Math.ceil((y1 - y0) / step));
-  const left = x0 / devicePixelRatio - rect.left;
-  const top = y0 / devicePixelRatio - rect.top;
+  const grain = wholeGrain(devicePixelRatio);
+  const before = (side: number): number => Math.floor((side + exact) / grain) * grain;
+  const beyond = (side: number): number => Math.ceil((side - exact) / grain) * grain;
+  const left = before(rect.left) - rect.left;
+  const top = before(rect.top) - rect.top;
+  const across = Math.round((beyond(rect.left + rect.width) - before(rect.left)) * devicePixelRatio);
+  const down = Math.round((beyond(rect.top + rect.height) - before(rect.top)) * devicePixelRatio);
+  const width = Math.max(0, Math.ceil(across / step));
+  const height = Math.max(0, Math.ceil(down / step));
   const size = step / devicePixelRatio;
   const [a, b, c, d, e, f] = pixelToCoordinate;
   const x = left + size / 2;
@@ -49,4 +50,16 @@ export function canvasFrame(
     cssHeight: height * size,
     toView: [a * size, b * size, c * size, d * size, a * x + c * y + e, b * x + d * y + f],
   };
+}
+
+/**
+ * The least length on which device and CSS pixels agree, CSS pixels. Browsers snap to the one or to the other (under
+ * an emulated pixel ratio); on their common grid both leave the canvas as it is.
+ */
+function wholeGrain(devicePixelRatio: number): number {
+  for (let grain = 1; grain <= 10; grain++) {
+    const pixels = grain * devicePixelRatio;
+    if (Math.abs(pixels - Math.round(pixels)) < 1e-3) return grain;
+  }
+  return 1 / devicePixelRatio;
 }

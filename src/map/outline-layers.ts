@@ -1,5 +1,6 @@
 import type Feature from 'ol/Feature.js';
 import type MultiPolygon from 'ol/geom/MultiPolygon.js';
+import LayerGroup from 'ol/layer/Group.js';
 import VectorLayer from 'ol/layer/Vector.js';
 import VectorImageLayer from 'ol/layer/VectorImage.js';
 import VectorSource from 'ol/source/Vector.js';
@@ -9,11 +10,15 @@ import type { StyleLike } from 'ol/style/Style.js';
 const manyNumbers = 200_000;
 
 /** The shores of ponds: sharp in every frame, or, for large results, an image that moves with the view. */
-export class OutlineLayers {
+export class OutlineLayers extends LayerGroup {
   readonly #source = new VectorSource();
   readonly #sharp = new VectorLayer({ source: this.#source });
   readonly #image = new VectorImageLayer({ source: this.#source, imageRatio: 1.5, visible: false });
-  readonly layers = [this.#sharp, this.#image];
+
+  constructor() {
+    super();
+    this.getLayers().extend([this.#sharp, this.#image]);
+  }
 
   show(outlines: readonly Feature<MultiPolygon>[]): void {
     let numbers = 0;
@@ -25,6 +30,7 @@ export class OutlineLayers {
   }
 
   setStyle(style: StyleLike): void {
-    for (const layer of this.layers) layer.setStyle(style);
+    this.#sharp.setStyle(style);
+    this.#image.setStyle(style);
   }
 }

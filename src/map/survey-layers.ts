@@ -48,15 +48,7 @@ export class SurveyLayers {
     this.wet = new WetLayer();
     this.setPalette(palette);
     this.group = new LayerGroup({
-      layers: [
-        this.relief,
-        this.wet,
-        ...this.outlines.layers,
-        this.links,
-        this.selection,
-        this.path,
-        this.pourPoints,
-      ],
+      layers: [this.relief, this.wet, this.outlines, this.links, this.selection, this.path, this.pourPoints],
       properties: { name: 'overbrim' },
     });
     this.map.addLayer(this.group);
