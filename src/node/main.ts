@@ -119,7 +119,7 @@ function sizeText(bytes: number): string {
 function explain(error: unknown, asJson: boolean, terminal: Terminal): number {
   if (error instanceof CommanderError) {
     if (error.exitCode === 0 || error.code === 'commander.help') return exitCodes.done;
-    const message = `${error.message.replace(/^error: /, '')}; see overbrim --help or overbrim run <process> --help.`;
+    const message = `${error.message.replace(/^error: /, '').replace('\n(Did', ' (did')}; see overbrim --help or overbrim run <process> --help.`;
     return say('bad-input', message, exitCodes.wrongUse);
   }
   if (error instanceof OverbrimError) {

@@ -2,7 +2,6 @@ import kinks from '@turf/kinks';
 import type { Feature, FeatureCollection, Geometry, Polygon, Position } from 'geojson';
 import { type OutletCells, OverbrimError } from '../core/index.ts';
 import { cellsOfLine, cellsOfPolygon } from '../raster/burn.ts';
-import { gridPosition } from '../raster/place.ts';
 import type { Terrain } from '../raster/terrain.ts';
 import { fromCrs84, type Point } from '../raster/transform.ts';
 
@@ -32,15 +31,21 @@ export function deepestCell({ elevationM }: Terrain['grid']): number {
 
 /**
  * Adds the features of a GeoJSON document (CRS84) as outlets: points, lines and polygons, each at the level of its
- * property `levelM` (metres, optional), so that a reach with fall is given piece by piece.
+ * property `levelM` (metres; `usualLevelM` without), so that a reach with fall is given piece by piece.
  * @throws OverbrimError `bad-input` when it is no GeoJSON, a feature lies outside the terrain or only on voids, a
  * polygon crosses itself, or a level is no number.
  */
-export function addOutletFeatures(levels: OutletLevels, terrain: Terrain, name: string, text: string): void {
+export function addOutletFeatures(
+  levels: OutletLevels,
+  terrain: Terrain,
+  name: string,
+  text: string,
+  usualLevelM: number,
+): void {
   featuresOf(name, text).forEach((feature, i) => {
     const what = `Feature ${i + 1} of ${name}`;
-    const levelM = levelOf(what, feature);
-    const inside = cellsOf(what, feature.geometry, terrain);
+    const levelM = levelOf(what, feature, usualLevelM);
+    const inside = cellsOfFeature(what, feature, terrain);
     if (inside.length === 0) {
       throw new OverbrimError(
         'bad-input',
@@ -73,7 +78,7 @@ function featuresOf(name: string, text: string): Feature[] {
     return document.features;
   }
   if (document?.type === 'Feature') return [document as Feature];
-  if (document?.type !== undefined && 'coordinates' in document) {
+  if (document?.type !== undefined && ('coordinates' in document || 'geometries' in document)) {
     return [{ type: 'Feature', properties: {}, geometry: document as Geometry }];
   }
   throw new OverbrimError(
@@ -82,9 +87,9 @@ function featuresOf(name: string, text: string): Feature[] {
   );
 }
 
-function levelOf(what: string, feature: Feature): number {
-  const level: unknown = feature.properties?.levelM;
-  if (level === undefined || level === null) return Number.NEGATIVE_INFINITY;
+function levelOf(what: string, feature: Feature, usualLevelM: number): number {
+  const level: unknown = feature?.properties?.levelM;
+  if (level === undefined || level === null) return usualLevelM;
   if (typeof level !== 'number' || !Number.isFinite(level)) {
     throw new OverbrimError(
       'bad-input',
@@ -94,9 +99,26 @@ function levelOf(what: string, feature: Feature): number {
   return level;
 }
 
+function cellsOfFeature(what: string, feature: Feature, terrain: Terrain): number[] {
+  try {
+    return cellsOf(what, feature.geometry, terrain);
+  } catch (cause) {
+    if (cause instanceof OverbrimError) throw cause;
+    throw new OverbrimError(
+      'bad-input',
+      `${what} is not as GeoJSON has it; expected a Feature with a geometry whose coordinates are nested lists of positions, so mend the file.`,
+      { cause },
+    );
+  }
+}
+
 function cellsOf(what: string, geometry: Geometry | null, terrain: Terrain): number[] {
   const { width, height } = terrain.grid;
-  const toTerrain = fromCrs84(terrain.georeference.crs);
+  const { crs, west, north, cellWidth, cellHeight } = terrain.georeference;
+  const toTerrain = fromCrs84(crs);
+  // A grid of longitudes may begin anywhere: a shape is looked for as it is, and a turn to either side.
+  const turns = crs.kind === 'geographic' ? [0, -360 / cellWidth, 360 / cellWidth] : [0];
+  const turned = (points: readonly Point[], by: number): Point[] => points.map(([x, y]) => [x + by, y]);
   const place = (position: Position): Point => {
     const [longitude, latitude] = position;
     if (!Number.isFinite(longitude) || !Number.isFinite(latitude) || Math.abs(latitude) > 90) {
@@ -105,19 +127,24 @@ function cellsOf(what: string, geometry: Geometry | null, terrain: Terrain): num
         `${what} has the position ${JSON.stringify(position)}; expected longitude and latitude in degrees.`,
       );
     }
-    return gridPosition(terrain, toTerrain(longitude, latitude));
+    const [x, y] = toTerrain(longitude, latitude);
+    return [(x - west) / cellWidth, (north - y) / cellHeight];
   };
-  const line = (positions: Position[]): number[] => cellsOfLine(positions.map(place), width, height);
-  const point = (position: Position): number[] => {
-    const at = place(position);
-    return cellsOfLine([at, at], width, height);
+  const line = (positions: Position[]): number[] => {
+    const points = positions.map(place);
+    return turns.flatMap((by) => cellsOfLine(turned(points, by), width, height));
   };
+  const point = (position: Position): number[] => line([position, position]);
   const polygon = (rings: Position[][]): number[] => {
+    refuseOpen(what, rings);
     refuseCrossing(what, rings);
-    return cellsOfPolygon(
-      rings.map((ring) => ring.map(place)),
-      width,
-      height,
+    const placed = rings.map((ring) => ring.map(place));
+    return turns.flatMap((by) =>
+      cellsOfPolygon(
+        placed.map((ring) => turned(ring, by)),
+        width,
+        height,
+      ),
     );
   };
   switch (geometry?.type) {
@@ -140,6 +167,18 @@ function cellsOf(what: string, geometry: Geometry | null, terrain: Terrain): num
         'bad-input',
         `${what} has the geometry ${JSON.stringify((geometry as Geometry | null)?.type ?? null)}; expected points, lines or polygons.`,
       );
+  }
+}
+
+function refuseOpen(what: string, rings: Position[][]): void {
+  for (const ring of rings) {
+    const [first, last] = [ring[0], ring[ring.length - 1]];
+    if (ring.length < 4 || first[0] !== last[0] || first[1] !== last[1]) {
+      throw new OverbrimError(
+        'bad-input',
+        `${what} is a polygon with a ring of ${ring.length} positions from ${first} to ${last}; expected at least 4, the last like the first, so close it.`,
+      );
+    }
   }
 }
 
