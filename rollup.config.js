@@ -8,6 +8,7 @@ import { hashes } from './.build/hashes.js';
 import { licences } from './.build/licences.js';
 import { minified } from './.build/minified.js';
 import { partEntry, partFiles, scriptIntro, scriptParts } from './.build/script-parts.js';
+import { validatorInBlob } from './.build/validator-in-blob.js';
 
 const inScripts = licences();
 
@@ -30,7 +31,7 @@ const entries = {
 
 /** Each element is an entry of its own, by class and by definition. */
 function everyElement() {
-  const names = readdirSync('src/elements').filter((file) => file.endsWith('.ts'));
+  const names = readdirSync('src/elements').filter((file) => /^(brim-.+|index)\.ts$/.test(file));
   return Object.fromEntries(
     names.map((file) => [`elements/${file.slice(0, -'.ts'.length)}`, `src/elements/${file}`]),
   );
@@ -133,7 +134,11 @@ function script(file, input, output, plugins) {
 
 /** A script of our own, small. */
 function ownScript(file, input, output = {}) {
-  return script(file, input, { intro: scriptIntro, sourcemap: true, ...output }, [scriptParts(), minified]);
+  return script(file, input, { intro: scriptIntro, sourcemap: true, ...output }, [
+    scriptParts(),
+    validatorInBlob,
+    minified,
+  ]);
 }
 
 /** A rarely used package beside the scripts, small already. */

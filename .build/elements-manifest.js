@@ -6,16 +6,33 @@ import { litPlugin } from '@custom-elements-manifest/analyzer/src/features/frame
 export const elementsManifest = {
   name: 'elements-manifest',
   generateBundle() {
-    const files = readdirSync('src/elements').filter((file) => file.endsWith('.ts'));
+    const files = readdirSync('src/elements', { recursive: true }).filter(isDescribed);
     const modules = files.sort().map((file) => {
-      const path = `src/elements/${file}`;
+      const path = `src/elements/${file.replaceAll('\\', '/')}`;
       return ts.createSourceFile(path, readFileSync(path, 'utf8'), ts.ScriptTarget.ES2022, true);
     });
-    const manifest = create({ modules, plugins: [...litPlugin(), asShipped] });
+    const manifest = create({ modules, plugins: [...litPlugin(), definitions, asShipped] });
     this.emitFile({
       type: 'asset',
       fileName: 'custom-elements.json',
       source: `${JSON.stringify(manifest, null, 1)}\n`,
+    });
+  },
+};
+
+/** `define('brim-x', BrimX)` in a module says that it defines the tag. */
+const definitions = {
+  name: 'definitions',
+  analyzePhase({ node, moduleDoc }) {
+    if (!ts.isCallExpression(node) || node.expression.getText() !== 'define') return;
+    const [tag, element] = node.arguments;
+    moduleDoc.exports.push({
+      kind: 'custom-element-definition',
+      name: tag.text,
+      declaration: {
+        name: element.getText(),
+        module: moduleDoc.path.replace(/\.ts$/, '.component.ts'),
+      },
     });
   },
 };
@@ -37,4 +54,9 @@ const asShipped = {
 
 function shipped(path) {
   return path.replace(/^\/?src\//, 'dist/').replace(/\.ts$/, '.js');
+}
+
+/** `define.ts` defines whatever it is told, and so no tag of its own. */
+function isDescribed(file) {
+  return file.endsWith('.ts') && file !== 'define.ts';
 }
