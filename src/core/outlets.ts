@@ -8,6 +8,9 @@ export interface OutletRules {
   readonly edges: 'open' | 'closed';
   /** `rim`: pieces of void joined to the rim drain like the rim, enclosed ones are walls · `walls`: no piece drains · `all`: every piece drains. */
   readonly voids: 'rim' | 'walls' | 'all';
+  /** Level of the water beyond the rim, and in the pieces of void that drain. */
+  readonly edgeLevelM: number;
+  readonly voidLevelM: number;
   /** Narrow gaps between the files of a mosaic: walls, or open like an outlet. */
   readonly gaps: 'walls' | 'open';
   readonly cells: OutletCells;
@@ -22,7 +25,14 @@ export interface OutletCells {
 export const noOutletCells: OutletCells = { cell: new Float64Array(0), levelM: new Float32Array(0) };
 
 /** Open edges, void pieces on the rim, gaps closed, nothing named. */
-export const usualOutlets: OutletRules = { edges: 'open', voids: 'rim', gaps: 'walls', cells: noOutletCells };
+export const usualOutlets: OutletRules = {
+  edges: 'open',
+  voids: 'rim',
+  gaps: 'walls',
+  edgeLevelM: Number.NEGATIVE_INFINITY,
+  voidLevelM: Number.NEGATIVE_INFINITY,
+  cells: noOutletCells,
+};
 
 /** The cell that stands for the outside in added sills. */
 export const outsideCell = -1;
@@ -35,12 +45,20 @@ export function outletSills(grid: Grid, survey: Survey, rules: OutletRules): Sil
   const found: { leaf: number; cell: number; elevationM: number }[] = [];
   if (rules.edges === 'open') {
     survey.rimLeaf.forEach((leaf, i) => {
-      found.push({ leaf, cell: survey.rimCell[i], elevationM: survey.rimElevationM[i] });
+      found.push({
+        leaf,
+        cell: survey.rimCell[i],
+        elevationM: Math.max(rules.edgeLevelM, survey.rimElevationM[i]),
+      });
     });
   }
   survey.besideLeaf.forEach((leaf, i) => {
     if (!drains(rules, survey, survey.besidePiece[i])) return;
-    found.push({ leaf, cell: survey.besideCell[i], elevationM: survey.besideElevationM[i] });
+    found.push({
+      leaf,
+      cell: survey.besideCell[i],
+      elevationM: Math.max(rules.voidLevelM, survey.besideElevationM[i]),
+    });
   });
   const named = new Map<number, { leaf: number; cell: number; elevationM: number }>();
   rules.cells.cell.forEach((cell, i) => {

@@ -1,11 +1,11 @@
 import { type Neighbours, OverbrimError, type Survey, surveySteps } from '../core/index.ts';
 import type { JobContext } from '../host/index.ts';
-import type { TerrainStore } from '../processes/index.ts';
+import type { TerrainRequest, TerrainStore } from '../processes/index.ts';
 import type { ByteSource } from '../raster/byte-source.ts';
 import { crsFromEpsg } from '../raster/crs.ts';
 import type { EpsgLookup } from '../raster/epsg.ts';
 import { openTerrain } from '../raster/open-terrain.ts';
-import type { Crs, Terrain, VerticalUnit } from '../raster/terrain.ts';
+import type { Crs, Terrain } from '../raster/terrain.ts';
 
 /** How the place of running reaches files. */
 export interface Reach {
@@ -31,19 +31,16 @@ export class TerrainShelf implements TerrainStore {
     this.#reach = reach;
   }
 
-  async terrain(
-    references: readonly string[],
-    verticalUnit: VerticalUnit | undefined,
-    context: JobContext,
-  ): Promise<Terrain> {
-    const key = JSON.stringify([references, verticalUnit ?? null]);
+  async terrain(request: TerrainRequest, context: JobContext): Promise<Terrain> {
+    const { references, ...extract } = request;
+    const key = JSON.stringify(request);
     const held = this.#terrains.get(key);
     if (held !== undefined) return held;
     context.progress(0, 'reading elevation');
     const sources = await this.#sources(references);
     try {
       const terrain = await openTerrain(sources, {
-        ...(verticalUnit === undefined ? {} : { verticalUnit }),
+        ...extract,
         ...(this.#reach.epsg === undefined ? {} : { epsg: this.#reach.epsg }),
         signal: context.signal,
         progress: (done) => context.progress(readingShare * done, 'reading elevation'),

@@ -22,6 +22,7 @@ import {
   sortedOutlets,
 } from './outlet-cells.ts';
 import type { TerrainInputs } from './terrain-inputs.ts';
+import { terrainRequest } from './terrain-request.ts';
 import type { TerrainStore } from './terrain-store.ts';
 import { isTypedPlace, typedCell } from './typed-place.ts';
 
@@ -46,8 +47,18 @@ export async function brimful(
 ): Promise<Brimful> {
   const terrain = await terrainOf(inputs, context, store);
   recordTerrain(terrain, context);
-  const { edges, neighbours, voids, gaps, outlets, crs } = inputs;
-  const key = JSON.stringify(['brimful', edges, neighbours, voids, gaps, outlets ?? [], crs ?? null]);
+  const { edges, neighbours, voids, gaps, outlets, crs, edgeLevel, voidLevel, outletLevel } = inputs;
+  const key = JSON.stringify({
+    edges,
+    neighbours,
+    voids,
+    gaps,
+    outlets,
+    crs,
+    edgeLevel,
+    voidLevel,
+    outletLevel,
+  });
   const analysis = await store.kept(terrain, key, () => filledToBrim(terrain, inputs, context, store));
   noteLandlocked(analysis.survey, analysis.drainage, context);
   return analysis;
@@ -84,7 +95,7 @@ async function filledToBrim(
 
 /** The terrain that the inputs name. */
 export function terrainOf(inputs: TerrainInputs, context: JobContext, store: TerrainStore): Promise<Terrain> {
-  return store.terrain(inputs.terrain, inputs.verticalUnit, context);
+  return store.terrain(terrainRequest(inputs), context);
 }
 
 async function outletRules(
@@ -93,16 +104,24 @@ async function outletRules(
   store: TerrainStore,
 ): Promise<OutletRules> {
   const levels: OutletLevels = new Map();
+  const levelM = inputs.outletLevel ?? Number.NEGATIVE_INFINITY;
   let voids: OutletRules['voids'] = inputs.voids;
   for (const outlet of inputs.outlets ?? []) {
     if (outlet === 'voids') voids = 'all';
-    else if (outlet === 'deepest') addOutlet(levels, [deepestCell(terrain.grid)], Number.NEGATIVE_INFINITY);
+    else if (outlet === 'deepest') addOutlet(levels, [deepestCell(terrain.grid)], levelM);
     else if (isTypedPlace(outlet)) {
       const cell = await typedCell(terrain, 'outlets', outlet, inputs.crs, store);
-      addOutlet(levels, [cell], Number.NEGATIVE_INFINITY);
-    } else addOutletFeatures(levels, terrain, outlet, await store.text(outlet));
+      addOutlet(levels, [cell], levelM);
+    } else addOutletFeatures(levels, terrain, outlet, await store.text(outlet), levelM);
   }
-  return { edges: inputs.edges, voids, gaps: inputs.gaps, cells: sortedOutlets(levels) };
+  return {
+    edges: inputs.edges,
+    voids,
+    gaps: inputs.gaps,
+    edgeLevelM: inputs.edgeLevel ?? Number.NEGATIVE_INFINITY,
+    voidLevelM: inputs.voidLevel ?? Number.NEGATIVE_INFINITY,
+    cells: sortedOutlets(levels),
+  };
 }
 
 function recordTerrain(terrain: Terrain, context: JobContext): void {

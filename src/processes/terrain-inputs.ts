@@ -16,6 +16,19 @@ export const terrainInputs = {
     schema: { type: 'string', enum: ['m', 'ft', 'us-ft'] },
     minOccurs: 0,
   },
+  extent: {
+    title: 'part of the terrain to analyse, as west,south,east,north',
+    description: 'In the CRS of the terrain; cells that touch it are read. Without it the whole terrain is.',
+    schema: { type: 'string' },
+    minOccurs: 0,
+  },
+  cellBudget: {
+    title: 'most cells to analyse',
+    description:
+      'When the terrain has more, the finest overview in the file that fits is taken; its averaged elevations make the result an estimate.',
+    schema: { type: 'integer', minimum: 1 },
+    minOccurs: 0,
+  },
   edges: {
     title: 'whether water leaves over the edge of the data: open or closed',
     description: 'At open edges a catchment drains over its lowest cell on the rim; closed edges are walls.',
@@ -49,6 +62,25 @@ export const terrainInputs = {
     schema: { type: 'string' },
     minOccurs: 0,
     maxOccurs: 'unbounded',
+  },
+  edgeLevel: {
+    title: 'level of the water beyond the edge, metres',
+    description:
+      'Where it stands higher than the ground at an open edge, water leaves at this level. Without it the ground decides.',
+    schema: { type: 'number' },
+    minOccurs: 0,
+  },
+  voidLevel: {
+    title: 'level of the water in voids that take water, metres',
+    description: 'Where it stands higher than the ground beside them, water leaves at this level.',
+    schema: { type: 'number' },
+    minOccurs: 0,
+  },
+  outletLevel: {
+    title: 'level of the water at further outlets, metres',
+    description: 'For the input outlets, where a feature names no level of its own.',
+    schema: { type: 'number' },
+    minOccurs: 0,
   },
   crs: {
     title: 'CRS of typed coordinates, as EPSG:code',

@@ -1,6 +1,7 @@
 import type { Neighbours, Survey } from '../core/index.ts';
 import type { JobContext } from '../host/index.ts';
-import type { Crs, Terrain, VerticalUnit } from '../raster/terrain.ts';
+import type { Crs, Terrain } from '../raster/terrain.ts';
+import type { TerrainRequest } from './terrain-request.ts';
 
 /**
  * What the built-in processes borrow from the place where they run: terrains and their surveys, kept under handles
@@ -8,11 +9,7 @@ import type { Crs, Terrain, VerticalUnit } from '../raster/terrain.ts';
  */
 export interface TerrainStore {
   /** The terrain behind one reference (path or URL), or the mosaic of several. */
-  terrain(
-    references: readonly string[],
-    verticalUnit: VerticalUnit | undefined,
-    context: JobContext,
-  ): Promise<Terrain>;
+  terrain(request: TerrainRequest, context: JobContext): Promise<Terrain>;
   /** Its survey; `madePits` are row-major cells, ascending. */
   survey(
     terrain: Terrain,

@@ -163,7 +163,7 @@ function allocated({ width, height }: CellRect): Float32Array {
   } catch (cause) {
     throw new OverbrimError(
       'out-of-memory',
-      `There is no memory for ${width} × ${height} cells (${4 * width * height} bytes); give a window or a smaller cell budget.`,
+      `There is no memory for ${width} × ${height} cells (${4 * width * height} bytes); give a smaller extent (--extent) or cell budget (--cell-budget).`,
       { cause },
     );
   }

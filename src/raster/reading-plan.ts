@@ -36,7 +36,7 @@ export function readingPlan(files: readonly ElevationFile[], extract: Extract, m
   if (extract.cellBudget === undefined) {
     throw new OverbrimError(
       'too-large',
-      `The terrain has ${plan.rect.width} × ${plan.rect.height} = ${cells} cells; at most ${mostCells} are read, so give a window or a cell budget, or raise the limit.`,
+      `The terrain has ${plan.rect.width} × ${plan.rect.height} = ${cells} cells; at most ${mostCells} are read, so give an extent (--extent) or a cell budget (--cell-budget).`,
     );
   }
   const levels = Math.min(...files.map((file) => file.levels.length));

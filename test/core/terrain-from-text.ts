@@ -16,6 +16,8 @@ export function terrainFromText(text: string, given: Partial<TerrainCase> = {}):
     voids: 'rim',
     gap: null,
     gaps: 'walls',
+    edgeLevelM: Number.NEGATIVE_INFINITY,
+    voidLevelM: Number.NEGATIVE_INFINITY,
     outlets: [],
     madePits: [],
     metrics: 'square',

@@ -94,7 +94,7 @@ describe('limits, each hit on purpose', () => {
 
   test('cells', async () => {
     expect(await refusal(opened([small], { limits: { cells: 11 } }))).toBe(
-      'too-large: The terrain has 4 × 3 = 12 cells; at most 11 are read, so give a window or a cell budget, or raise the limit.',
+      'too-large: The terrain has 4 × 3 = 12 cells; at most 11 are read, so give an extent (--extent) or a cell budget (--cell-budget).',
     );
     await opened([small], { limits: { cells: 12 } });
   });

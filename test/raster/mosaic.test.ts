@@ -132,7 +132,7 @@ describe('files that do not fit together', () => {
 
   test('tiles so far apart that the grid between them is too large', async () => {
     expect(await refusal(opened([first, tile(50_000, 50_000, 5, 5)]))).toBe(
-      'too-large: The terrain has 50005 × 50005 = 2500500025 cells; at most 100000000 are read, so give a window or a cell budget, or raise the limit.',
+      'too-large: The terrain has 50005 × 50005 = 2500500025 cells; at most 100000000 are read, so give an extent (--extent) or a cell budget (--cell-budget).',
     );
   });
 

@@ -1,8 +1,6 @@
 import type { SmallGrid, SmallOutlet } from '../oracles/small-grid.ts';
 import { cellsOfGap, type TerrainCase } from './terrain-case.ts';
 
-const ground = Number.NEGATIVE_INFINITY;
-
 /** A case as the oracles take it: every cell from which water leaves, found cell by cell from the rules' wording. */
 export function oracleGrid(terrain: TerrainCase): SmallGrid {
   const { width, height, neighbours, wraps, north, south } = terrain;
@@ -13,14 +11,14 @@ export function oracleGrid(terrain: TerrainCase): SmallGrid {
 
 /** Cells from which water leaves: over the rim, into voids that drain, and the named ones. */
 export function outletsOf(terrain: TerrainCase): SmallOutlet[] {
-  const { z, edges, outlets } = terrain;
+  const { z, edges, outlets, edgeLevelM, voidLevelM } = terrain;
   const found: SmallOutlet[] = outlets.filter(({ cell }) => !Number.isNaN(z[cell]));
   const open = drainingVoids(terrain);
   for (let cell = 0; cell < z.length; cell++) {
     if (Number.isNaN(z[cell])) continue;
-    const leaves = edges === 'open' && isOnRim(terrain, cell);
-    if (leaves || around(terrain, cell, terrain.neighbours).some((other) => open.has(other))) {
-      found.push({ cell, levelM: ground });
+    if (edges === 'open' && isOnRim(terrain, cell)) found.push({ cell, levelM: edgeLevelM });
+    if (around(terrain, cell, terrain.neighbours).some((other) => open.has(other))) {
+      found.push({ cell, levelM: voidLevelM });
     }
   }
   return found;

@@ -18,6 +18,9 @@ export interface TerrainCase {
   /** A gap between two files of a mosaic, all void, and what it is taken for. */
   readonly gap: CellRect | null;
   readonly gaps: 'walls' | 'open';
+  /** Level of the water beyond the rim and in voids that drain. */
+  readonly edgeLevelM: number;
+  readonly voidLevelM: number;
   /** Named outlets by cell, ascending. */
   readonly outlets: readonly { readonly cell: number; readonly levelM: number }[];
   readonly madePits: readonly number[];
@@ -82,6 +85,8 @@ export function terrainCases(most: CaseSize, options: { plain?: boolean } = {}):
         voids: fc.constantFrom('rim' as const, 'walls' as const, 'all' as const),
         gap: fc.constantFrom(null, null, null, 'row' as const, 'column' as const),
         gaps: fc.constantFrom('walls' as const, 'open' as const),
+        edgeLevelM: fc.constantFrom(ground, ground, ground, 1, 3.5),
+        voidLevelM: fc.constantFrom(ground, ground, ground, 2, -3),
         named: someCells(3),
         levels: fc.array(fc.constantFrom(ground, ground, 2, 4, -3, 8.5), { minLength: 3, maxLength: 3 }),
         madePits: fc.oneof(fc.constant<number[]>([]), someCells(4)),
@@ -112,6 +117,8 @@ export function terrainCases(most: CaseSize, options: { plain?: boolean } = {}):
           voids: draw.voids,
           gap: allVoid ? null : gap,
           gaps: draw.gaps,
+          edgeLevelM: draw.edgeLevelM,
+          voidLevelM: draw.voidLevelM,
           outlets: draw.named.map((cell, i) => ({ cell, levelM: draw.levels[i] })),
           madePits: draw.madePits.filter((cell) => !Number.isNaN(z[cell])),
           // Only degrees have poles.
@@ -158,11 +165,14 @@ export function metricsOfCase({ height, width, metrics, north, south }: TerrainC
   return geographicMetrics(height, north === 'pole-row' ? 90 + step / 2 : farthest, 360 / width, step);
 }
 
-export function rulesOfCase({ edges, voids, gaps, outlets }: TerrainCase): OutletRules {
+export function rulesOfCase(terrain: TerrainCase): OutletRules {
+  const { edges, voids, gaps, edgeLevelM, voidLevelM, outlets } = terrain;
   return {
     edges,
     voids,
     gaps,
+    edgeLevelM,
+    voidLevelM,
     cells: {
       cell: Float64Array.from(outlets, ({ cell }) => cell),
       levelM: Float32Array.from(outlets, ({ levelM }) => levelM),

@@ -128,6 +128,8 @@ it('the turned cases are real grids', () => {
     voids: 'rim',
     gap: { column: 1, row: 0, width: 2, height: 1 },
     gaps: 'walls',
+    edgeLevelM: Number.NEGATIVE_INFINITY,
+    voidLevelM: Number.NEGATIVE_INFINITY,
     outlets: [{ cell: 2, levelM: 0 }],
     madePits: [3],
     metrics: 'square',
