@@ -11,8 +11,11 @@ export interface Light {
   readonly exaggeration: number;
 }
 
-/** From the north-west, as maps have it by common practice, since light from below turns hills into hollows. */
-export const northWestLight: Light = { azimuthDeg: 315, altitudeDeg: 45, exaggeration: 1 };
+/**
+ * From the north-west, as maps have it by common practice, since light from below turns hills into hollows; heights
+ * doubled, since kerbs and banks are low.
+ */
+export const northWestLight: Light = { azimuthDeg: 315, altitudeDeg: 45, exaggeration: 2 };
 
 const radians = Math.PI / 180;
 

@@ -1,7 +1,7 @@
 export { checkMap } from './check-map.ts';
 export { type Light, northWestLight } from './hillshade.ts';
 export type { Rgb } from './packed-colour.ts';
-export { type DepthClass, darkPalette, depthClasses, lightPalette, type Palette } from './palette.ts';
+export { type DepthClass, darkPalette, lightPalette, type Palette } from './palette.ts';
 export { PixelCells } from './pixel-cells.ts';
 export type { PondOnView } from './pond-features.ts';
 export { terrainProjection } from './projections.ts';

@@ -19,13 +19,13 @@ export function overflowBearing({ pourPoint, spillsInto, outline, inside }: Pond
  * The line of a link, from a pond's pour point to the inside of the next pond: it leaves straight away from the own
  * water and bends over (quadratic Bézier curve). Null where nothing follows.
  */
-export function linkLine({ pourPoint, spillsInto, inside }: PondOnView, pieces = 12): Place[] | null {
+export function linkLine({ pourPoint, spillsInto, inside }: PondOnView, pieces = 24): Place[] | null {
   if (pourPoint === null || spillsInto === null) return null;
   const [x, y] = pourPoint;
   const [toX, toY] = spillsInto.inside;
   const away = Math.hypot(x - inside[0], y - inside[1]);
   const span = Math.hypot(toX - x, toY - y);
-  const reach = away > 0 ? (0.4 * span) / away : 0;
+  const reach = away > 0 ? (0.25 * span) / away : 0;
   const viaX = x + (x - inside[0]) * reach;
   const viaY = y + (y - inside[1]) * reach;
   const at = (t: number, a: number, b: number, c: number) =>

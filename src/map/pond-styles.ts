@@ -10,7 +10,7 @@ import type { Palette } from './palette.ts';
 /** Ponds smaller than this on the screen show no pour point and no link, CSS pixels. */
 const leastPx = 10;
 /** From the pour point to the middle of its arrowhead, CSS pixels. */
-const arrowPx = 9;
+const arrowPx = 8.5;
 
 /** The shore of a pond; the inside is clear but takes clicks. */
 export function outlineStyle({ shore }: Palette): Style {
@@ -23,8 +23,8 @@ export function outlineStyle({ shore }: Palette): Style {
 /** Features need `reach` (units of the view). */
 export function linkStyle({ accent, halo }: Palette): StyleFunction {
   const styles = [
-    new Style({ stroke: new Stroke({ color: css(halo, 0.7), width: 3 }) }),
-    new Style({ stroke: new Stroke({ color: css(accent, 0.8), width: 1.25 }) }),
+    new Style({ stroke: new Stroke({ color: css(halo, 0.6), width: 3 }) }),
+    new Style({ stroke: new Stroke({ color: css(accent, 0.6), width: 1.25 }) }),
   ];
   return (feature, resolution) => (feature.get('reach') < leastPx * resolution ? undefined : styles);
 }
@@ -43,10 +43,7 @@ export function pourPointStyle(palette: Palette): StyleFunction {
 export function selectedStyle(palette: Palette): StyleFunction {
   const shore = [
     new Style({ stroke: new Stroke({ color: css(palette.halo), width: 6 }) }),
-    new Style({
-      stroke: new Stroke({ color: css(palette.accent), width: 3 }),
-      fill: new Fill({ color: css(palette.accent, 0.12) }),
-    }),
+    new Style({ stroke: new Stroke({ color: css(palette.accent), width: 3 }) }),
   ];
   const sill = new Style({ image: dot(palette, 5), zIndex: 2 });
   return (feature, resolution) => {
@@ -67,7 +64,7 @@ function arrow(
   const ahead = arrowPx * factor * resolution;
   return new Style({
     geometry: new Point([x + Math.sin(turn) * ahead, y + Math.cos(turn) * ahead]),
-    image: arrowhead(palette, 6.5 * factor, turn),
+    image: arrowhead(palette, 7 * factor, turn),
     zIndex: 1,
   });
 }

@@ -1,11 +1,11 @@
 import { hillshade, type Light, northWestLight } from './hillshade.ts';
-import { packed } from './packed-colour.ts';
+import { packed, type Rgb } from './packed-colour.ts';
 import { lightPalette, type Palette } from './palette.ts';
 import type { GatheredCells, PixelCells } from './pixel-cells.ts';
 import { PixelLayer, type PixelLayerOptions } from './pixel-layer.ts';
 import { PooledShade } from './pooled-shade.ts';
 
-type Greys = Pick<Palette, 'shadow' | 'lit'>;
+type Greys = Pick<Palette, 'shadow' | 'level' | 'lit'>;
 
 /** Shaded relief in greys, transparent on voids. */
 export class ReliefLayer extends PixelLayer {
@@ -21,7 +21,7 @@ export class ReliefLayer extends PixelLayer {
   ) {
     super('brim-relief', cells, options);
     this.#light = light;
-    this.#colour = greys(palette);
+    this.#colour = greys(palette, light);
   }
 
   override setPixelCells(cells: PixelCells | undefined): void {
@@ -30,8 +30,8 @@ export class ReliefLayer extends PixelLayer {
   }
 
   setPalette(palette: Greys): void {
-    this.#colour = greys(palette);
-    this.gatherAnew();
+    this.#colour = greys(palette, this.#light);
+    this.repaint();
   }
 
   protected override paint({ index, halvings }: GatheredCells, _isNew: boolean, out: Uint32Array): void {
@@ -47,11 +47,19 @@ export class ReliefLayer extends PixelLayer {
   }
 }
 
-/** Packed colour of each shade; 0, a void, is transparent. */
-function greys({ shadow, lit }: Greys): Uint32Array {
-  const between = (t: number, of: 0 | 1 | 2): number => Math.round(shadow[of] + (lit[of] - shadow[of]) * t);
+/** Packed colour of each shade, with `level` at that of level ground; 0, a void, is transparent. */
+function greys({ shadow, level, lit }: Greys, { altitudeDeg }: Light): Uint32Array {
+  const flat = Math.sin((altitudeDeg * Math.PI) / 180);
   return Uint32Array.from({ length: 256 }, (_, shade) => {
-    const t = (shade - 1) / 254;
-    return shade === 0 ? 0 : packed([between(t, 0), between(t, 1), between(t, 2)]);
+    if (shade === 0) return 0;
+    const light = (shade - 1) / 254;
+    return light < flat
+      ? packed(between(shadow, level, light / flat))
+      : packed(between(level, lit, (light - flat) / (1 - flat)));
   });
+}
+
+function between(from: Rgb, to: Rgb, t: number): Rgb {
+  const mixed = (of: 0 | 1 | 2): number => Math.round(from[of] + (to[of] - from[of]) * t);
+  return [mixed(0), mixed(1), mixed(2)];
 }

@@ -93,6 +93,7 @@ export class SurveyLayers {
 
   setPalette(palette: Palette): void {
     this.relief.setPalette(palette);
+    this.wet.setClasses(palette.depths);
     this.outlines.setStyle(outlineStyle(palette));
     this.links.setStyle(linkStyle(palette));
     this.selection.setStyle(selectedStyle(palette));

@@ -1,5 +1,5 @@
 import { type DepthColours, depthColours, paintDepths } from './depth-colours.ts';
-import { type DepthClass, depthClasses } from './palette.ts';
+import { type DepthClass, lightPalette } from './palette.ts';
 import type { GatheredCells, PixelCells } from './pixel-cells.ts';
 import { PixelLayer, type PixelLayerOptions } from './pixel-layer.ts';
 import { PooledSurvey } from './pooled-survey.ts';
@@ -23,7 +23,7 @@ export class WetLayer extends PixelLayer {
   /** Shows the brimful state of the survey until other levels are set. */
   constructor(
     cells?: PixelCells,
-    classes: readonly DepthClass[] = depthClasses,
+    classes: readonly DepthClass[] = lightPalette.depths,
     options?: PixelLayerOptions,
   ) {
     super('brim-wet', cells, options);

@@ -9,7 +9,7 @@ import type { Light, SurveyView } from '../../../src/map/index.ts';
 import {
   checkMap,
   darkPalette,
-  depthClasses,
+  lightPalette,
   SurveyLayers,
   terrainProjection,
 } from '../../../src/map/index.ts';
@@ -189,7 +189,8 @@ async function times(rounds: number): Promise<Record<string, number>> {
       }),
     );
   const view = map.getView();
-  const recolour = time(() => layers.wet.setClasses(depthClasses));
+  const recolour = time(() => layers.wet.setClasses(lightPalette.depths));
+  const reliefAnew = time(() => layers.relief.setPalette(lightPalette));
   let turn = 0;
   const show = (shown: readonly unknown[]) => {
     for (const layer of layers.group.getLayers().getArray()) layer.setVisible(shown.includes(layer));
@@ -209,7 +210,7 @@ async function times(rounds: number): Promise<Record<string, number>> {
   const wetAndReliefFrame = time(frame);
   const still = time(() => map.renderSync());
   show(layers.group.getLayers().getArray());
-  return { recolour, bareFrame, wetFrame, wetAndReliefFrame, still };
+  return { recolour, reliefAnew, bareFrame, wetFrame, wetAndReliefFrame, still };
 }
 
 const stage = {
@@ -227,7 +228,7 @@ const stage = {
   compare,
   readBack,
   times,
-  depthClasses,
+  lightPalette,
 };
 export type Stage = typeof stage;
 export type { Light };
