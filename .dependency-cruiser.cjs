@@ -80,13 +80,13 @@ module.exports = {
       comment: 'A new folder of src needs its line in the table above.',
       severity: 'error',
       from: {},
-      to: { path: '^src/', pathNot: [`^src/${oneOf(rooms)}/`, '^src/index[.]ts$'] },
+      to: { path: '^src/', pathNot: [`^src/${oneOf(rooms)}/`, '^src/(index|script)[.]ts$'] },
     },
     {
       name: 'every-source-lives-in-a-room',
       comment: 'A new folder of src needs its line in the table above.',
       severity: 'error',
-      from: { path: '^src/', pathNot: [`^src/${oneOf(rooms)}/`, '^src/index[.]ts$'] },
+      from: { path: '^src/', pathNot: [`^src/${oneOf(rooms)}/`, '^src/(index|script)[.]ts$'] },
       to: {},
     },
     {

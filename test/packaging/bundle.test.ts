@@ -4,7 +4,7 @@ import { type Installed, installed } from './installed.ts';
 
 let user: Installed;
 beforeAll(() => {
-  user = installed(({ dependencies }) => Object.keys(dependencies));
+  user = installed(({ dependencies }) => [...Object.keys(dependencies), 'ol']);
 });
 afterAll(() => user?.remove());
 
@@ -32,7 +32,8 @@ function mentions(code: string, what: RegExp): boolean {
 }
 
 test('a page can bundle everything but the Node entry, with nothing of Node in it', async () => {
-  const entries = ['overbrim', 'overbrim/core', 'overbrim/raster', 'overbrim/host', 'overbrim/processes'];
+  const rooms = ['core', 'raster', 'host', 'processes', 'engine', 'map', 'elements'];
+  const entries = ['overbrim', ...rooms.map((room) => `overbrim/${room}`)];
   const script = entries.map((entry, i) => `import * as names${i} from '${entry}';\nconsole.log(names${i});`);
   const { code, warnings } = await bundled(script.join('\n'));
   expect(warnings).toEqual([]);
@@ -46,4 +47,17 @@ test('what is imported and not used leaves nothing in the bundle', async () => {
   );
   expect(mentions(code, /console\.log\(1\)/)).toBe(true);
   expect(mentions(code, /OverbrimError/)).toBe(false);
+});
+
+test('an element that is imported for its effect stays, and brings no other', async () => {
+  const { code, warnings } = await bundled(`import 'overbrim/elements/brim-legend.js';`);
+  expect(warnings).toEqual([]);
+  expect(mentions(code, /\bBrimLegend\b/)).toBe(true);
+  expect(mentions(code, /\bBrimTerrain\b/)).toBe(false);
+});
+
+test('a class that is imported and not used leaves nothing', async () => {
+  const script = `import { BrimLegend } from 'overbrim/elements/brim-legend.component.js';\nconsole.log(1);`;
+  const { code } = await bundled(script);
+  expect(mentions(code, /BrimLegend/)).toBe(false);
 });

@@ -17,6 +17,7 @@ interface Manifest {
   readonly version: string;
   readonly exports: Readonly<Record<string, string | { readonly types: string; readonly default: string }>>;
   readonly bin: Readonly<Record<string, string>>;
+  readonly sideEffects: readonly string[];
   readonly dependencies: Readonly<Record<string, string>>;
 }
 

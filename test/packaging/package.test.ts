@@ -5,9 +5,12 @@ import { type Installed, installed } from './installed.ts';
 
 let user: Installed;
 beforeAll(() => {
-  user = installed(({ dependencies }) => Object.keys(dependencies));
+  user = installed(({ dependencies }) => [...Object.keys(dependencies), 'ol']);
 });
 afterAll(() => user?.remove());
+
+/** Plain scripts are loaded by a tag or as a worker, not imported. */
+const isScript = (file: string): boolean => /^dist\/overbrim[^/]*\.js$/.test(file);
 
 describe('what is shipped', () => {
   test('is the build, the licence and the words for people, and nothing else', () => {
@@ -16,6 +19,10 @@ describe('what is shipped', () => {
       'CHANGELOG.md',
       'LICENSE',
       'README.md',
+      'dist/custom-elements.json',
+      'dist/hashes.json',
+      'dist/licences.txt',
+      'dist/overbrim-epsg.json',
       'package.json',
       'src/processes/depressions.md',
       'src/processes/spill-path.md',
@@ -23,11 +30,11 @@ describe('what is shipped', () => {
   });
 
   test('has a declaration for each module, and imports only files that are there', () => {
-    const modules = user.files.filter((file) => file.endsWith('.js'));
+    const modules = user.files.filter((file) => file.endsWith('.js') && !isScript(file));
     expect(modules.length).toBeGreaterThan(50);
     for (const file of modules) expect(user.files).toContain(file.replace(/\.js$/, '.d.ts'));
     let imports = 0;
-    for (const file of user.files.filter((name) => /\.(js|d\.ts)$/.test(name))) {
+    for (const file of user.files.filter((name) => /\.(js|d\.ts)$/.test(name) && !isScript(name))) {
       const text = readFileSync(join(user.packageFolder, file), 'utf8');
       for (const [, , target = ''] of text.matchAll(/(from|import) ?\(?['"](\.[^'"]+)['"]/g)) {
         expect(target, `in ${file}`).toMatch(/\.js$/);
@@ -43,8 +50,9 @@ describe('what is shipped', () => {
 
 describe('a program that installed the package', () => {
   test('can import each entry, and finds names there', () => {
-    const entries = Object.keys(user.manifest.exports).filter((entry) => entry !== './package.json');
-    expect(entries).toEqual(['.', './core', './raster', './host', './processes', './node']);
+    const entries = Object.keys(user.manifest.exports).filter((entry) => !/\.js(on)?$/.test(entry));
+    const rooms = ['core', 'raster', 'host', 'processes', 'engine', 'map', 'elements', 'node'];
+    expect(entries).toEqual(['.', ...rooms.map((room) => `./${room}`)]);
     for (const entry of entries) {
       const name = `overbrim${entry.slice(1)}`;
       const script = `import * as names from '${name}'; console.log(Object.keys(names).length)`;
@@ -52,6 +60,38 @@ describe('a program that installed the package', () => {
       expect(stderr, name).toBe('');
       expect(Number(stdout), name).toBeGreaterThan(0);
     }
+  });
+
+  test('can import each element, by class and by definition, where there is no page', () => {
+    const elements = user.files.flatMap((file) => /^dist\/(elements\/brim-.+\.js)$/.exec(file)?.[1] ?? []);
+    expect(elements.length).toBeGreaterThanOrEqual(10);
+    expect(elements.length % 2).toBe(0);
+    for (const element of elements) {
+      const script = `import * as names from 'overbrim/${element}'; console.log(Object.keys(names).length)`;
+      const { stdout, stderr } = user.node('--input-type=module', '--eval', script);
+      expect(stderr, element).toBe('');
+      expect(Number(stdout), element).toBeGreaterThan(0);
+    }
+  });
+
+  test('finds each file that a page may want by its name', () => {
+    const files = Object.entries(user.manifest.exports).filter(([, target]) => typeof target === 'string');
+    expect(files.length).toBeGreaterThan(5);
+    for (const [, target] of files) expect(existsSync(join(user.packageFolder, String(target)))).toBe(true);
+  });
+
+  test('keeps what defines elements, and only that, for its effect', () => {
+    const defining = user.files.filter(
+      (file) => /^dist\/elements\/(brim-.+|index)\.js$/.test(file) && !file.endsWith('.component.js'),
+    );
+    const others = [
+      './dist/node/bin.js',
+      './dist/engine/worker.js',
+      './dist/script.js',
+      './dist/overbrim*.js',
+    ];
+    const expected = [...others, ...defining.map((file) => `./${file}`)];
+    expect([...user.manifest.sideEffects].sort()).toEqual(expected.sort());
   });
 
   test('finds a CRS by its EPSG code', () => {

@@ -8,7 +8,7 @@ const nodeTypes = ['@types/node', 'undici-types'];
 
 let user: Installed;
 beforeAll(() => {
-  user = installed(({ dependencies }) => [...Object.keys(dependencies), ...nodeTypes]);
+  user = installed(({ dependencies }) => [...Object.keys(dependencies), 'ol', ...nodeTypes]);
 });
 afterAll(() => user?.remove());
 
@@ -38,6 +38,12 @@ test('the analysis has types for a program without page or Node', () => {
 test('everything but the Node entry has types for a page', () => {
   const entries = ['overbrim', 'overbrim/core', 'overbrim/raster', 'overbrim/host', 'overbrim/processes'];
   expect(complaints(entries, ['ES2022', 'DOM', 'DOM.Iterable'], [])).toBe('');
+});
+
+test('map, engine and elements have types for a page with OpenLayers', () => {
+  const entries = ['overbrim/engine', 'overbrim/map', 'overbrim/elements', 'overbrim/elements/brim-host.js'];
+  const use = `const host: names3.BrimHost = document.createElement('brim-host');\nvoid host;\n`;
+  expect(complaints(entries, ['ES2022', 'DOM', 'DOM.Iterable'], [], use)).toBe('');
 });
 
 test('the Node entry has types for a program on Node', () => {
