@@ -112,7 +112,7 @@ async function outletRules(
     else if (isTypedPlace(outlet)) {
       const cell = await typedCell(terrain, 'outlets', outlet, inputs.crs, store);
       addOutlet(levels, [cell], levelM);
-    } else addOutletFeatures(levels, terrain, outlet, await store.text(outlet), levelM);
+    } else addOutletFeatures(levels, terrain, outlet, await outletText(outlet, store), levelM);
   }
   return {
     edges: inputs.edges,
@@ -122,6 +122,20 @@ async function outletRules(
     voidLevelM: inputs.voidLevel ?? Number.NEGATIVE_INFINITY,
     cells: sortedOutlets(levels),
   };
+}
+
+/** The text of a file of outlets; what is no file is none of the other ways to name one either. */
+async function outletText(outlet: string, store: TerrainStore): Promise<string> {
+  try {
+    return await store.text(outlet);
+  } catch (cause) {
+    if (!(cause instanceof OverbrimError) || cause.code !== 'unreadable') throw cause;
+    throw new OverbrimError(
+      'bad-input',
+      `The outlet "${outlet}" is neither x,y nor voids nor deepest nor a GeoJSON file that can be read (${cause.message.replace(/\.$/, '')}).`,
+      { cause },
+    );
+  }
 }
 
 function recordTerrain(terrain: Terrain, context: JobContext): void {

@@ -17,12 +17,6 @@ export async function crsFromEpsg(code: number, lookup: EpsgLookup = packagedEps
   if (definition === null) {
     throw unknown(`EPSG:${code} (${entry.name}) is no projected or geographic CRS with a known definition`);
   }
-  if (code === 3857) {
-    throw new OverbrimError(
-      'unsupported',
-      'The CRS is EPSG:3857, in which areas are inflated (fourfold at 60° latitude); expected one to measure in, so warp the terrain to a local projected CRS or to EPSG:4326.',
-    );
-  }
   return crsOf(entry.name, code, definition);
 }
 
@@ -37,6 +31,12 @@ export async function crsFromKeys(geoKeys: GeoKeys, name: string, lookup?: EpsgL
   }
   const code = numberKey(geoKeys, model === 1 ? keys.projectedCrs : keys.geodeticCrs);
   if (code !== null && code !== userDefined && code !== 0) {
+    if (code === 3857) {
+      throw new OverbrimError(
+        'unsupported',
+        `The CRS of ${name} is EPSG:3857, in which areas are inflated (fourfold at 60° latitude); expected one to measure in, so warp the terrain to a local projected CRS or to EPSG:4326.`,
+      );
+    }
     const crs = await crsFromEpsg(code, lookup);
     if (crs.kind !== (model === 1 ? 'projected' : 'geographic')) {
       throw unknown(

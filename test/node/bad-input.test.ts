@@ -153,6 +153,11 @@ describe('wrong use exits with 2 and says', () => {
       /^The place 500025,975 lies on a cell without elevation/,
     ],
     [
+      'an outlet that is no word, place or file',
+      [...ponds, '--outlets', 'deepst'],
+      /^The outlet "deepst" is neither x,y nor voids nor deepest nor a GeoJSON file that can be read \(deepst does not exist; check the path\)\.$/,
+    ],
+    [
       'outlets that are not JSON',
       [...ponds, '--outlets', notJson],
       /broken\.geojson is not JSON \(.*\); expected a GeoJSON file\.$/,
@@ -200,11 +205,6 @@ describe('failure exits with 1 and says', () => {
       'that two files do not fit',
       terrain(two, other),
       'other.tif is in WGS 84 / UTM zone 32N; expected WGS 84 / UTM zone 31N as in two.tif, so warp it to the same grid first.',
-    ],
-    [
-      'that outlets are not there',
-      [...ponds, '--outlets', work.at('none.geojson')],
-      /none\.geojson does not exist; check the path\.$/,
     ],
     [
       'that a CRS is not known',

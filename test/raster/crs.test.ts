@@ -100,10 +100,6 @@ describe('systems that are refused', () => {
       2048,
       'The axes of EPSG:2048 (Hartebeesthoek94 / Lo19) do not run east and north; expected a projected or geographic CRS, so give the file the CRS that it is in.',
     ],
-    [
-      3857,
-      'The CRS is EPSG:3857, in which areas are inflated (fourfold at 60° latitude); expected one to measure in, so warp the terrain to a local projected CRS or to EPSG:4326.',
-    ],
   ])('EPSG:%i', async (code, sentence) => {
     expect(await refusal(crsFromEpsg(code))).toBe(`unsupported: ${sentence}`);
   });
@@ -145,6 +141,16 @@ describe('systems that are refused', () => {
         ],
       },
       `a.tif calls EPSG:4326 (WGS 84) a projected CRS; ${remedy}`,
+    ],
+    [
+      'a CRS that inflates areas',
+      {
+        keys: [
+          [1024, 1],
+          [3072, 3857],
+        ],
+      },
+      'The CRS of a.tif is EPSG:3857, in which areas are inflated (fourfold at 60° latitude); expected one to measure in, so warp the terrain to a local projected CRS or to EPSG:4326.',
     ],
     [
       'a method unknown',
