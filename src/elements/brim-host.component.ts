@@ -1,0 +1,196 @@
+import { ContextProvider } from '@lit/context';
+import { css, html, LitElement, nothing, type PropertyDeclarations, type PropertyValues } from 'lit';
+import { openEngine } from '../engine/client.ts';
+import { drawOn } from './drawing.ts';
+import { BrimErrorEvent } from './events/brim-error-event.ts';
+import { findMap } from './find-map.ts';
+import { look } from './look.ts';
+import type { UnitSystem } from './measures.ts';
+import type { Engine } from './running.ts';
+import { Session, type SessionChange } from './session.ts';
+import { sessionContext } from './session-link.ts';
+import { statusLine, statusLook } from './status-line.ts';
+import { toneAround, watchTone } from './tone.ts';
+import { Voice } from './voice.ts';
+import { words } from './words.ts';
+
+/** How often a map that is not there yet is looked for, milliseconds, and how long before that is told. */
+const lookMs = 200;
+const patienceMs = 3000;
+/** Between two looks at the clock while something runs, milliseconds. */
+const tickMs = 500;
+
+/**
+ * Binds a map, the engine, the units and the language, and provides them to the elements inside it and to those that
+ * name it by `host="id"`. Shows a status line: progress with Cancel, errors, what was done last, the caution.
+ *
+ * @element brim-host
+ * @attr map - Name of a global variable that holds the OpenLayers map; as a property the map itself.
+ * @attr for - Id of an element with a property `map`.
+ * @attr worker-url - Address of overbrim-worker.js where it does not lie beside the script.
+ * @attr {'metric' | 'us'} units - System of units.
+ * @attr lang - Language of labels and numbers; without it that of the page.
+ * @attr without-caution - Leaves the caution out of the status line, for pages that show it elsewhere.
+ * @fires {BrimErrorEvent} brim-error - Something went wrong; prevent it to show the message elsewhere.
+ * @slot - Elements that work with this host.
+ * @csspart status - The status line.
+ * @csspart job - A running job in it.
+ * @csspart fault - An error in it.
+ * @csspart said - What was done last.
+ * @csspart caution - The caution.
+ * @cssproperty --brim-ink - Text.
+ * @cssproperty --brim-paper - Ground of cards.
+ * @cssproperty --brim-accent - Buttons, focus, marks.
+ */
+export class BrimHost extends LitElement {
+  static override styles = [look, statusLook, css`:host { display: block; }`];
+  static override properties: PropertyDeclarations = {
+    map: {},
+    for: { type: String },
+    workerUrl: { type: String, attribute: 'worker-url' },
+    units: { type: String },
+    lang: { type: String },
+    withoutCaution: { type: Boolean, attribute: 'without-caution' },
+    engine: { attribute: false },
+  };
+
+  declare map: unknown;
+  declare for: string | null;
+  declare workerUrl: string | null;
+  declare units: UnitSystem;
+  declare withoutCaution: boolean;
+  /** An engine to share with others; without it the host opens one at the first question. */
+  declare engine: Engine | null;
+
+  readonly session = new Session(async () => this.engine ?? (await this.#opened()));
+  #endDrawing: (() => void) | undefined;
+  #drawnMap: unknown;
+  #endWatch: (() => void) | undefined;
+  #lookingSince = 0;
+  #nextLook: ReturnType<typeof setTimeout> | undefined;
+  #tick: ReturnType<typeof setInterval> | undefined;
+  #told = new Set<number>();
+
+  constructor() {
+    super();
+    this.map = null;
+    this.for = null;
+    this.workerUrl = null;
+    this.units = 'metric';
+    this.withoutCaution = false;
+    this.engine = null;
+    new ContextProvider(this, { context: sessionContext, initialValue: this.session });
+    this.session.addEventListener('change', (event) => this.#changed(event as SessionChange));
+    this.session.running.addEventListener('change', () => this.#runs());
+  }
+
+  override connectedCallback(): void {
+    super.connectedCallback();
+    this.#look();
+    this.#endWatch = watchTone(() => this.session.put({ tone: toneAround(this) }));
+    this.session.put({ tone: toneAround(this), lang: this.#language() });
+  }
+
+  override disconnectedCallback(): void {
+    super.disconnectedCallback();
+    clearTimeout(this.#nextLook);
+    clearInterval(this.#tick);
+    this.#tick = undefined;
+    this.#endWatch?.();
+    this.#unbind();
+    // A host that is only moved on the page is back at once.
+    queueMicrotask(() => {
+      if (!this.isConnected) this.session.running.dismiss('terrain', 'ponds', 'path');
+    });
+  }
+
+  protected override willUpdate(changed: PropertyValues): void {
+    if (changed.has('units')) this.session.put({ units: this.units === 'us' ? 'us' : 'metric' });
+    if (changed.has('lang')) this.session.put({ lang: this.#language() });
+    if (changed.has('map') || changed.has('for')) this.#look();
+  }
+
+  protected override render(): unknown {
+    const { state, running } = this.session;
+    return html`
+      <slot></slot>
+      <div part="status" class="card status ${state.tone}" lang=${state.lang}>
+        ${statusLine(new Voice(state.lang, state.units), state, running.jobs, (id) =>
+          this.session.forgetFault(id),
+        )}
+        ${this.withoutCaution ? nothing : html`<p part="caution" class="small">${words(state.lang, 'caution')}</p>`}
+      </div>
+    `;
+  }
+
+  #language(): string {
+    return this.lang || this.closest('[lang]')?.getAttribute('lang') || 'en';
+  }
+
+  /** Looks for the map until it is there: pages often make it after their elements. */
+  #look(): void {
+    clearTimeout(this.#nextLook);
+    this.#lookingSince = Date.now();
+    this.#lookAgain();
+  }
+
+  #lookAgain(): void {
+    if (!this.isConnected) return;
+    try {
+      const found = findMap(this.map, this.for, this.getRootNode() as Document | ShadowRoot);
+      if ('map' in found) {
+        if (found.map === this.#drawnMap) return;
+        this.#unbind();
+        this.#drawnMap = found.map;
+        this.#endDrawing = drawOn(found.map, this.session);
+        return;
+      }
+      this.#unbind();
+      const waitedMs = Date.now() - this.#lookingSince;
+      if (waitedMs < patienceMs) this.#nextLook = setTimeout(() => this.#lookAgain(), lookMs);
+      else this.session.fault('bad-input', words(this.#language(), found.missing, found.values));
+    } catch (error) {
+      this.#unbind();
+      this.session.fault('bad-input', error instanceof Error ? error.message : String(error));
+    }
+  }
+
+  #unbind(): void {
+    this.#endDrawing?.();
+    this.#endDrawing = undefined;
+    this.#drawnMap = undefined;
+  }
+
+  #changed({ keys }: SessionChange): void {
+    this.requestUpdate();
+    if (!keys.has('faults')) return;
+    for (const { id, code, message } of this.session.state.faults) {
+      if (this.#told.has(id)) continue;
+      this.#told.add(id);
+      if (!this.dispatchEvent(new BrimErrorEvent(code, message))) this.session.forgetFault(id);
+    }
+  }
+
+  #runs(): void {
+    this.requestUpdate();
+    const runs = this.session.running.jobs.length > 0;
+    if (runs) this.#tick ??= setInterval(() => this.requestUpdate(), tickMs);
+    else {
+      clearInterval(this.#tick);
+      this.#tick = undefined;
+    }
+  }
+
+  #opened(): Promise<Engine> {
+    return openEngine({
+      ...(this.workerUrl === null ? {} : { workerUrl: this.workerUrl }),
+      onStepBack: (sentence) => this.session.put({ said: sentence }),
+    });
+  }
+}
+
+declare global {
+  interface HTMLElementTagNameMap {
+    'brim-host': BrimHost;
+  }
+}

@@ -1,0 +1,6 @@
+import { BrimTerrain } from './brim-terrain.component.ts';
+import { define } from './define.ts';
+
+define('brim-terrain', BrimTerrain);
+
+export { BrimTerrain };

@@ -1,0 +1,145 @@
+import { css, html, nothing, type TemplateResult } from 'lit';
+import type { Leg, TracedPath } from './traced-path.ts';
+import type { Voice } from './voice.ts';
+
+/** Legs shown before more are asked for. */
+const fewLegs = 12;
+
+export const legListLook = css`
+  .place {
+    flex-wrap: nowrap;
+    margin-block-start: 0.125rem;
+  }
+  .place input {
+    flex: 1;
+    min-width: 0;
+  }
+  .stacked {
+    display: block;
+  }
+  .stacked select {
+    width: 100%;
+  }
+  .legs {
+    list-style: none;
+    border-block-start: 1px solid var(--ink);
+  }
+  .leg {
+    display: grid;
+    grid-template-columns: 1.5rem 2.25rem minmax(0, 1fr) auto;
+    column-gap: 0.5rem;
+    align-items: center;
+    width: 100%;
+    text-align: start;
+    border: 0;
+    border-block-end: 1px solid var(--line);
+    border-radius: 0;
+    padding: 0.1875rem 0.375rem;
+    min-height: 1.75rem;
+  }
+  .leg.pointed {
+    background: var(--wash);
+    box-shadow: inset 3px 0 var(--accent);
+  }
+  .leg:focus-visible {
+    outline-offset: -2px;
+  }
+  .leg .number {
+    color: var(--muted);
+  }
+  .leg .figures {
+    text-align: end;
+  }
+  .leg svg {
+    display: block;
+  }
+  .stroke {
+    stroke: var(--accent);
+    stroke-width: 3;
+    fill: none;
+  }
+`;
+
+interface LegList {
+  readonly path: TracedPath;
+  /** The leg that is pointed at. */
+  readonly leg: number | null;
+  readonly showsAll: boolean;
+  readonly numberOf: (pond: string) => number | null;
+  readonly onPoint: (leg: number | null) => void;
+  readonly onShow: (leg: number) => void;
+  readonly onAll: () => void;
+  readonly onClear: () => void;
+}
+
+/** A path in sum and leg by leg. Pointing at a leg, or reaching it by keyboard, marks it on the map. */
+export function legList(voice: Voice, list: LegList): TemplateResult {
+  const { say, measures } = voice;
+  const { path, showsAll, onAll, onClear } = list;
+  const shown = showsAll ? path.legs : path.legs.slice(0, fewLegs);
+  return html`
+    <div part="legs" class="stack">
+      <p class="lead">
+        ${say('pathTotal', {
+          length: measures.length(path.lengthM),
+          drop: measures.elevation(path.dropM),
+          storage: measures.volume(path.storageM3),
+        })}
+        ${say(path.endsAt === 'outlet' ? 'pathEndsOutlet' : 'pathEndsNoWay')}
+      </p>
+      <ol class="legs" aria-label=${say('legs')}>
+        ${shown.map((leg) => html`<li>${legLine(voice, leg, list)}</li>`)}
+      </ol>
+      <div class="row screen-only">
+        ${
+          shown.length < path.legs.length
+            ? html`<button type="button" @click=${onAll}>${say('legMore', { count: path.legs.length })}</button>`
+            : nothing
+        }
+        <button type="button" @click=${onClear}>${say('clearPath')}</button>
+      </div>
+    </div>
+  `;
+}
+
+function legLine({ say, measures }: Voice, leg: Leg, list: LegList): TemplateResult {
+  const number = leg.pond === null ? null : list.numberOf(leg.pond);
+  const way =
+    leg.kind === 'pond'
+      ? number === null
+        ? say('legSmallPond')
+        : say('legPond', { number })
+      : say(leg.kind === 'culvert' ? 'legCulvert' : 'legLand');
+  const change =
+    leg.kind === 'pond'
+      ? say('legHolds', { storage: measures.volume(leg.storageM3) })
+      : leg.dropM === 0
+        ? say('legLevel')
+        : say('legDrop', { drop: measures.elevation(leg.dropM) });
+  return html`
+    <button
+      type="button"
+      class="leg ${leg.leg === list.leg ? 'pointed' : ''}"
+      @pointerenter=${() => list.onPoint(leg.leg)}
+      @pointerleave=${() => list.onPoint(null)}
+      @focus=${() => list.onPoint(leg.leg)}
+      @blur=${() => list.onPoint(null)}
+      @click=${() => list.onShow(leg.leg)}
+    >
+      <span class="number">${leg.leg}</span>
+      ${legStroke(leg.kind)}
+      <span>${way}</span>
+      <span class="figures">${measures.length(leg.lengthM)}, ${change}</span>
+    </button>
+  `;
+}
+
+/** The line by which a leg is drawn on the map. */
+export function legStroke(kind: Leg['kind']): TemplateResult {
+  const dash = { land: nothing, pond: '9 6', culvert: '3 4' }[kind];
+  return html`
+    <svg width="36" height="12" aria-hidden="true">
+      <line class="stroke" x1="2" y1="6" x2="34" y2="6" stroke-dasharray=${dash} />
+    </svg>
+  `;
+}
