@@ -5,15 +5,8 @@ import OlMap from 'ol/Map.js';
 import { transform } from 'ol/proj.js';
 import { VERSION } from 'ol/util.js';
 import View from 'ol/View.js';
-import type { Light, SurveyView } from '../../../src/map/index.ts';
-import {
-  checkMap,
-  darkPalette,
-  lightPalette,
-  SurveyLayers,
-  terrainProjection,
-} from '../../../src/map/index.ts';
-import { cellAt } from '../../../src/map/read-out.ts';
+import type { SurveyView } from '../../../src/map/index.ts';
+import { darkPalette, lightPalette, SurveyLayers, terrainProjection } from '../../../src/map/index.ts';
 import { fromCrs84 } from '../../../src/raster/transform.ts';
 
 type Scene = {
@@ -161,7 +154,8 @@ function readBack(step: number): { asked: number; wrong: number; wet: number } {
     const answer = layers.readOut(transform(place, own, map.getView().getProjection()));
     const ground = survey.elevationM[cell];
     const isVoid = Number.isNaN(ground);
-    const depth = isVoid ? null : Math.max(0, survey.levelM[survey.leaf[cell]] - ground);
+    const level = survey.levelM[survey.leaf[cell]];
+    const depth = isVoid ? null : Number.isFinite(level) ? Math.max(0, level - ground) : 0;
     found.asked++;
     if (depth) found.wet++;
     const pond = depth ? survey.ponds[survey.pondOfLeaf[survey.leaf[cell]]] : null;
@@ -220,8 +214,7 @@ const stage = {
   survey,
   scene,
   darkPalette,
-  cellAt,
-  checkMap,
+  SurveyLayers,
   look,
   settled,
   onlyWater,
@@ -231,7 +224,6 @@ const stage = {
   lightPalette,
 };
 export type Stage = typeof stage;
-export type { Light };
 
 window.stage = stage;
 document.body.dataset.ready = 'yes';

@@ -50,6 +50,7 @@ export async function pageScript(ol: 'ol' | 'ol7'): Promise<string> {
 export async function serve(
   { view, ponds, pourPoints, path }: Analysed,
   script: string,
+  scripts: Readonly<Record<string, string>> = {},
 ): Promise<{ url: string; close(): Promise<void> }> {
   const { elevationM, leaf, levelM, pondOfLeaf, ...plain } = view;
   const body = new Map<string, [string, string | Uint8Array]>([
@@ -58,6 +59,7 @@ export async function serve(
     ['/page.css', ['text/css', css]],
     ['/scene.json', ['application/json', JSON.stringify({ view: plain, ponds, pourPoints, path })]],
   ]);
+  for (const [name, text] of Object.entries(scripts)) body.set(name, ['text/javascript', text]);
   for (const [name, { buffer }] of Object.entries({ elevationM, leaf, levelM, pondOfLeaf })) {
     body.set(`/${name}`, ['application/octet-stream', new Uint8Array(buffer)]);
   }
