@@ -1,4 +1,4 @@
-import { existsSync, readdirSync, rmSync } from 'node:fs';
+import { readdirSync, rmSync } from 'node:fs';
 import commonjs from '@rollup/plugin-commonjs';
 import nodeResolve from '@rollup/plugin-node-resolve';
 import typescript from '@rollup/plugin-typescript';
@@ -12,8 +12,6 @@ import { validatorInBlob } from './.build/validator-in-blob.js';
 
 const inScripts = licences();
 
-const withElements = existsSync('src/script.ts');
-
 /** What package.json hands on: module in dist → its source. */
 const entries = {
   index: 'src/index.ts',
@@ -26,7 +24,8 @@ const entries = {
   'map/index': 'src/map/index.ts',
   'node/index': 'src/node/index.ts',
   'node/bin': 'src/node/bin.ts',
-  ...(withElements ? { script: 'src/script.ts', ...everyElement() } : {}),
+  script: 'src/script.ts',
+  ...everyElement(),
 };
 
 /** Each element is an entry of its own, by class and by definition. */
@@ -37,10 +36,10 @@ function everyElement() {
   );
 }
 
-/** A module that disappears from src must not live on in dist. */
+/** A module that disappears from src must not live on in dist; what fails to compile leaves the last build. */
 const emptyFirst = {
   name: 'empty-first',
-  buildStart() {
+  generateBundle() {
     rmSync('dist', { recursive: true, force: true });
   },
 };
@@ -103,7 +102,7 @@ const modules = {
     declarationImports,
     computedImports,
     epsgRegister,
-    ...(withElements ? [elementsManifest] : []),
+    elementsManifest,
   ],
   onwarn,
 };
@@ -149,9 +148,7 @@ function part([name, file]) {
 const builds = [
   modules,
   ownScript('overbrim-worker.js', 'dist/engine/worker.js'),
-  ...(withElements
-    ? [ownScript('overbrim.js', 'dist/script.js', { name: 'overbrim', banner: openLayersFirst })]
-    : []),
+  ownScript('overbrim.js', 'dist/script.js', { name: 'overbrim', banner: openLayersFirst }),
   ...Object.entries(partFiles).map(part),
 ];
 builds.at(-1).plugins.push(inScripts.write, hashes);
