@@ -15,7 +15,8 @@ function overbrimPart(name, file) {
   globalThis.overbrimParts ??= {};
   const parts = globalThis.overbrimParts;
   if (parts[name] !== undefined) return Promise.resolve(parts[name]);
-  const url = new URL(file, overbrimAddress).href;
+  // Whoever started the worker may know better: a bundler renames files, and inside a blob there is no address.
+  const url = globalThis.overbrimPartAddresses?.[file] ?? new URL(file, overbrimAddress).href;
   const loaded = new Promise((resolve, reject) => {
     if (typeof document === 'undefined') {
       importScripts(url);
@@ -31,9 +32,8 @@ function overbrimPart(name, file) {
   return loaded.then(() => parts[name]);
 }
 
-/** The address of the running script; inside a blob, which has none of use, its maker leaves it. */
+/** The address of the running script. */
 function addressOfScript() {
-  if (globalThis.overbrimWorkerAddress !== undefined) return globalThis.overbrimWorkerAddress;
   if (typeof document === 'undefined') return location.href;
   return document.currentScript?.src || document.baseURI;
 }
