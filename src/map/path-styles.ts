@@ -19,8 +19,9 @@ const bearingPx = 18;
  * `spill-path`.
  */
 export function pathStyle(palette: Palette): StyleFunction {
-  const line = (color: string, width: number, lineDash?: number[]): Style =>
+  const line = (color: string, width: number, lineDash?: number[], zIndex = 1): Style =>
     new Style({
+      zIndex,
       stroke: new Stroke({
         color,
         width,
@@ -29,7 +30,8 @@ export function pathStyle(palette: Palette): StyleFunction {
         ...(lineDash ? { lineDash } : {}),
       }),
     });
-  const halo = line(css(palette.halo, 0.85), 6.5);
+  // Under all legs, so that no leg's halo cuts into the one before.
+  const halo = line(css(palette.halo, 0.85), 6.5, undefined, 0);
   const byKind = new Map([
     ['land', line(css(palette.accent), 3)],
     ['pond', line(css(palette.accent), 3, [9, 6])],
@@ -39,7 +41,7 @@ export function pathStyle(palette: Palette): StyleFunction {
     const parts = partsOf(feature.getGeometry() as LineString | MultiLineString);
     const styles = [halo, byKind.get(feature.get('kind')) ?? line(css(palette.accent), 3)];
     const mark = (at: number[], image: ReturnType<typeof cross>): void => {
-      styles.push(new Style({ geometry: new Point(at), image, zIndex: 1 }));
+      styles.push(new Style({ geometry: new Point(at), image, zIndex: 2 }));
     };
     const first = parts[0];
     const last = parts[parts.length - 1];
@@ -57,7 +59,7 @@ export function pathStyle(palette: Palette): StyleFunction {
     else if (end) mark([...placeAt(last, 1)], cross(palette, 8));
     if (feature.get('leg') === 1) {
       styles.push(
-        new Style({ geometry: new Point(first.getFirstCoordinate()), image: ring(palette, 5), zIndex: 2 }),
+        new Style({ geometry: new Point(first.getFirstCoordinate()), image: ring(palette, 5), zIndex: 3 }),
       );
     }
     return styles;

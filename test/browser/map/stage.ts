@@ -1,3 +1,4 @@
+import { existsSync } from 'node:fs';
 import { createServer } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { fileURLToPath } from 'node:url';
@@ -20,8 +21,14 @@ const flags = [
 ];
 
 /** Starts the system's Chromium; CHROMIUM names another one. */
-export function openBrowser(): Promise<Browser> {
-  return chromium.launch({ executablePath: process.env.CHROMIUM ?? '/usr/bin/chromium', args: flags });
+export async function openBrowser(): Promise<Browser> {
+  const executablePath = process.env.CHROMIUM ?? '/usr/bin/chromium';
+  if (!existsSync(executablePath)) {
+    throw new Error(
+      `There is no browser at ${executablePath}; apt-get install chromium, or name one by CHROMIUM=path.`,
+    );
+  }
+  return chromium.launch({ executablePath, args: flags });
 }
 
 /** The test page as one script, on the OpenLayers of the named package of node_modules. */
