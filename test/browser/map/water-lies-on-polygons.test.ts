@@ -50,5 +50,6 @@ describe.each([
       }
       await page.close();
     },
+    180_000,
   );
 });
