@@ -112,14 +112,19 @@ export class BrimHost extends LitElement {
 
   protected override render(): unknown {
     const { state, running } = this.session;
+    const voice = new Voice(state.lang, state.units);
     return html`
       <slot></slot>
-      <div part="status" class="card status ${state.tone}" lang=${state.lang}>
-        ${statusLine(new Voice(state.lang, state.units), state, running.jobs, (id) =>
-          this.session.forgetFault(id),
-        )}
-        ${this.withoutCaution ? nothing : html`<p part="caution" class="small">${words(state.lang, 'caution')}</p>`}
-      </div>
+      <section part="status" class="card status ${state.tone}" aria-label=${voice.say('status')} lang=${state.lang}>
+        ${statusLine(voice, state, running.jobs, (id) => this.session.forgetFault(id))}
+      </section>
+      ${
+        this.withoutCaution
+          ? nothing
+          : html`<p part="caution" class="card caution small ${state.tone}" lang=${state.lang}>
+              <b>${voice.say('cautionTitle')}.</b> ${voice.say('caution')}
+            </p>`
+      }
     `;
   }
 

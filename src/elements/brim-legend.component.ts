@@ -1,4 +1,4 @@
-import { html, nothing, type PropertyDeclarations } from 'lit';
+import { html, nothing, type PropertyDeclarations, type TemplateResult } from 'lit';
 import type BaseLayer from 'ol/layer/Base.js';
 import { css as rgb } from '../map/packed-colour.ts';
 import type { ReadOut } from '../map/read-out.ts';
@@ -71,12 +71,7 @@ export class BrimLegend extends Card {
         <span class="label">${voice.say('readOut')}</span><br />${this.#readOut()}
       </p>
       ${this.#part('legendWater', [layers.wet], depths)}
-      ${this.#part(
-        'legendRelief',
-        [layers.relief],
-        [row(swatch.relief(rgb(palette.lit), rgb(palette.shadow)), voice.say('legendRelief'))],
-        false,
-      )}
+      ${this.#part('legendRelief', [layers.relief], [], swatch.relief(rgb(palette.lit), rgb(palette.shadow)))}
       ${
         ponds
           ? this.#part(
@@ -110,23 +105,34 @@ export class BrimLegend extends Card {
     `;
   }
 
-  /** Rows under a heading that switches their layers. */
-  #part(key: MessageKey, layers: readonly BaseLayer[], rows: readonly unknown[], heads = true): unknown {
+  /** Rows under a heading that switches their layers; without rows the heading has a mark of its own. */
+  #part(
+    key: MessageKey,
+    layers: readonly BaseLayer[],
+    rows: readonly unknown[],
+    mark: unknown = nothing,
+  ): TemplateResult {
     const title = this.voice.say(key);
-    const isShown = layers.some((layer) => layer.getVisible());
     const change = ({ currentTarget }: Event): void => {
       for (const layer of layers) layer.setVisible((currentTarget as HTMLInputElement).checked);
       this.requestUpdate();
     };
-    const box = html`<input
-      type="checkbox"
-      .checked=${isShown}
-      aria-label=${this.voice.say('show', { what: title })}
-      @change=${change}
-    />`;
-    return heads
-      ? html`<div class="part"><h3>${box}<span>${title}</span></h3><ul>${rows}</ul></div>`
-      : html`<div class="part flat">${box}<ul>${rows}</ul></div>`;
+    return html`
+      <div class="part">
+        <h3>
+          <label>
+            <input
+              type="checkbox"
+              .checked=${layers.some((layer) => layer.getVisible())}
+              aria-label=${this.voice.say('show', { what: title })}
+              @change=${change}
+            />
+            ${mark}<span>${title}</span>
+          </label>
+        </h3>
+        ${rows.length === 0 ? nothing : html`<ul>${rows}</ul>`}
+      </div>
+    `;
   }
 
   #readOut(): string {

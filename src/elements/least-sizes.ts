@@ -66,7 +66,7 @@ export function leastSizes(
                   .value=${live(String(Number((least[name] / unit.size).toPrecision(6))))}
                   @change=${change}
                 />
-                <span class="small">${unit.symbol}</span>
+                <span class="small unit">${unit.symbol}</span>
               </span>
             </label>
           `;

@@ -17,16 +17,24 @@ export const legListLook = css`
   .stacked {
     display: block;
   }
-  .stacked select {
-    width: 100%;
+  .in {
+    flex-wrap: nowrap;
+  }
+  .in select {
+    flex: 1;
+    min-width: 0;
+  }
+  form > .place,
+  form > .in {
+    margin-block-start: 0.25rem;
   }
   .legs {
     list-style: none;
     border-block-start: 1px solid var(--ink);
   }
   .leg {
-    display: grid;
-    grid-template-columns: 1.5rem 2.25rem minmax(0, 1fr) auto;
+    display: flex;
+    flex-wrap: wrap;
     column-gap: 0.5rem;
     align-items: center;
     width: 100%;
@@ -45,10 +53,13 @@ export const legListLook = css`
     outline-offset: -2px;
   }
   .leg .number {
+    min-width: 1.25rem;
     color: var(--muted);
   }
   .leg .figures {
+    flex: 1;
     text-align: end;
+    white-space: nowrap;
   }
   .leg svg {
     display: block;

@@ -1,9 +1,7 @@
 import { css, html, nothing, type SVGTemplateResult, svg, type TemplateResult } from 'lit';
 
 export const legendLook = css`
-  .part h3,
-  .part li,
-  .part.flat {
+  .part li {
     display: flex;
     align-items: center;
     gap: 0.5rem;
@@ -13,10 +11,7 @@ export const legendLook = css`
     display: grid;
     gap: 0.125rem;
     font-size: 0.8125rem;
-    padding-inline-start: 2rem;
-  }
-  .part.flat ul {
-    padding-inline-start: 0;
+    padding-inline-start: 1.5rem;
   }
   .part li > span {
     min-width: 0;
@@ -25,10 +20,17 @@ export const legendLook = css`
     flex: none;
     display: block;
   }
+  .part label {
+    display: flex;
+    align-items: center;
+    gap: 0.5rem;
+    min-height: 1.5rem;
+    cursor: pointer;
+  }
   input[type='checkbox'] {
     flex: none;
-    width: 1.5rem;
-    height: 1.5rem;
+    width: 1rem;
+    height: 1rem;
     min-height: 0;
     margin: 0;
     accent-color: var(--accent);

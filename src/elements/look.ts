@@ -88,9 +88,6 @@ export const look = css`
   .lead {
     font-size: 0.9375rem;
   }
-  .lead b {
-    font-weight: 600;
-  }
   .note {
     border-inline-start: 2px solid var(--accent);
     padding-inline-start: 0.5rem;
@@ -112,6 +109,9 @@ export const look = css`
     color: var(--muted);
     padding-inline-end: var(--space);
     margin-inline-end: calc(var(--space) * -1);
+  }
+  .unit {
+    white-space: nowrap;
   }
   .row {
     display: flex;

@@ -138,7 +138,7 @@ const en = {
   fromPond: 'From pond {number}',
   fromNoPond: 'From the selected pond',
   typedPlace: 'Or type a coordinate',
-  typedCrs: 'Coordinate in',
+  typedCrs: 'in',
   crsTerrain: 'terrain: {name}',
   crsView: 'map: {name}',
   crsLonLat: 'longitude, latitude',

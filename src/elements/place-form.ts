@@ -30,7 +30,19 @@ export function placeForm(
   ];
   return html`
     <form class="stack screen-only" novalidate @submit=${submit}>
-      <label class="stacked">
+      <label class="label stacked" for="place">${say('typedPlace')}</label>
+      <div class="row place">
+        <input
+          id="place"
+          name="place"
+          autocomplete="off"
+          aria-invalid=${problem !== ''}
+          aria-describedby=${problem === '' ? nothing : 'problem'}
+          ${ref(field)}
+        />
+        <button type="submit">${say('trace')}</button>
+      </div>
+      <label class="row in">
         <span class="label">${say('typedCrs')}</span>
         <select
           name="crs"
@@ -41,19 +53,6 @@ export function placeForm(
           )}
         </select>
       </label>
-      <label class="stacked" for="place"><span class="label">${say('typedPlace')}</span></label>
-      <div class="row place">
-        <input
-          id="place"
-          name="place"
-          autocomplete="off"
-          inputmode="text"
-          aria-invalid=${problem !== ''}
-          aria-describedby=${problem === '' ? nothing : 'problem'}
-          ${ref(field)}
-        />
-        <button type="submit">${say('trace')}</button>
-      </div>
       ${problem === '' ? nothing : html`<p id="problem" role="alert" class="note">${problem}</p>`}
     </form>
   `;

@@ -6,10 +6,17 @@ import type { SessionState } from './session.ts';
 import type { Voice } from './voice.ts';
 
 export const statusLook = css`
-  .status {
-    border-block-start: 1px solid var(--line);
+  section.status {
+    position: sticky;
+    inset-block-end: 0;
+    z-index: 1;
+    border: 1px solid var(--line);
     padding: 0.5rem 0.75rem;
     font-size: 0.8125rem;
+  }
+  .caution {
+    padding: 0.5rem 0.75rem;
+    background: none;
   }
   .status > * + * {
     margin-block-start: 0.5rem;
