@@ -11,7 +11,9 @@ export function engineEntry() {
     return engine;
   };
   return {
-    open(software: Software, epsgUrl: string): void {
+    open(software: Software, epsgUrl: string, partUrls: Readonly<Record<string, string>>): void {
+      // Read by the loader of parts that the build puts into the worker's file.
+      Object.assign(globalThis, { overbrimPartAddresses: partUrls });
       engine = new Engine(software, fetchedEpsg(epsgUrl));
     },
     descriptions: () => ready().descriptions(),

@@ -19,6 +19,12 @@ export interface Started {
 const besideWorker = new URL('../overbrim-worker.js', import.meta.url).href;
 const besideEpsg = new URL('../overbrim-epsg.json', import.meta.url).href;
 
+/** What the worker loads when a file needs it. Named here in full, so that bundlers bring these files along. */
+const besideParts = {
+  'overbrim-zstd.js': new URL('../overbrim-zstd.js', import.meta.url).href,
+  'overbrim-user-defined-crs.js': new URL('../overbrim-user-defined-crs.js', import.meta.url).href,
+};
+
 /** How long a worker may take to say that it is there, milliseconds. */
 const patienceMs = 20_000;
 
@@ -67,7 +73,7 @@ async function inWorker(url: string, place: EnginePlace): Promise<Started> {
     setTimeout(() => reject(new Error(`no answer within ${patienceMs / 1000} s`)), patienceMs);
   });
   try {
-    await Promise.race([entry.open(software, besideEpsg), failed]);
+    await Promise.race([entry.open(software, besideEpsg, besideParts), failed]);
   } catch (error) {
     worker.terminate();
     throw error;
@@ -96,7 +102,7 @@ async function onMainThread(files: readonly string[]): Promise<Started> {
   const make: (() => EngineEntry) | undefined = Reflect.get(globalThis, entryOnMainThread);
   if (make === undefined) throw new Error('the file gave no engine');
   const direct = make();
-  direct.open(software, besideEpsg);
+  direct.open(software, besideEpsg, besideParts);
   // Called straight, with the same promises as across threads.
   const entry = new Proxy(direct, {
     get:

@@ -1,4 +1,5 @@
 import { unzlibSync } from 'fflate';
+import type { ZSTDDecoder } from 'zstddec';
 import { OverbrimError } from '../core/error.ts';
 import { decodeLzw } from './lzw.ts';
 import { decodePackBits } from './pack-bits.ts';
@@ -50,6 +51,7 @@ export async function decodeBlock(
   try {
     bytes = await unpacked(data, format.compression, expected);
   } catch (cause) {
+    if (cause instanceof OverbrimError) throw cause;
     throw damaged(format.name, cause);
   }
   if (bytes.length < expected) throw damaged(format.name);
@@ -69,15 +71,30 @@ async function unpacked(data: Uint8Array, compression: number, expected: number)
     case 32773:
       return decodePackBits(data, expected);
     case 50000: {
-      const { ZSTDDecoder } = await import('zstddec');
-      const decoder = new ZSTDDecoder();
-      await decoder.init();
+      const decoder = await zstandard();
       // With the length given, the library unpacks into that much memory and no more.
       return decoder.decode(data, expected);
     }
     default:
       // With a buffer given, the library never grows it.
       return unzlibSync(data, { out: new Uint8Array(expected) });
+  }
+}
+
+/** The decoder is WebAssembly, which some pages forbid and which may not have been shipped beside the script. */
+async function zstandard(): Promise<ZSTDDecoder> {
+  try {
+    const { ZSTDDecoder: Decoder } = await import('zstddec');
+    const decoder = new Decoder();
+    await decoder.init();
+    return decoder;
+  } catch (cause) {
+    const why = cause instanceof Error ? cause.message : String(cause);
+    throw new OverbrimError(
+      'unsupported',
+      `Zstandard compression cannot be read here (${why}); allow WebAssembly in the page's policy, or give the file deflate compression.`,
+      { cause },
+    );
   }
 }
 

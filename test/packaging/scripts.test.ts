@@ -141,17 +141,20 @@ describe('on a page with OpenLayers', () => {
     expect(answer.elevationM).toEqual(expectedCells('zstd'));
   });
 
-  test('of another origin, a worker inside a blob answers and finds the register of CRS codes', async () => {
-    const far = await served({ head: '', open: true });
-    try {
-      const head = openLayers + tag(`${far.url}/dist/overbrim.js`, hashes['overbrim.js']);
-      const answer = await onPage({ head }, (opened) => surveyed(opened, 'strips-float32'));
-      expect(answer.place).toBe('inline worker');
-      expect(answer.elevationM).toEqual(expectedCells('strips-float32'));
-    } finally {
-      await far.close();
-    }
-  });
+  test.each(['strips-float32', 'zstd'])(
+    'of another origin, a worker inside a blob reads %s',
+    async (fixture) => {
+      const far = await served({ head: '', open: true });
+      try {
+        const head = openLayers + tag(`${far.url}/dist/overbrim.js`, hashes['overbrim.js']);
+        const answer = await onPage({ head }, (opened) => surveyed(opened, fixture));
+        expect(answer.place).toBe('inline worker');
+        expect(answer.elevationM).toEqual(expectedCells(fixture));
+      } finally {
+        await far.close();
+      }
+    },
+  );
 
   test('a worker under another name and address does the same', async () => {
     const far = '/dist/overbrim-worker.js?renamed';

@@ -10,14 +10,14 @@ import { fileSource } from 'overbrim/node';
 import { cloudOptimizedGeoTiff, openTerrain } from 'overbrim/raster';
 
 const here = (path) => new URL(path, import.meta.url).pathname;
-const command = here('../../../dist/node/bin.js');
+const command = here('../../dist/node/bin.js');
 const folder = mkdtempSync(join(tmpdir(), 'overbrim-oracles-'));
 
 try {
   const terrains = {
-    olinda: [here('../../data/olinda_dem_utm25s.tif')],
+    olinda: [here('../data/olinda_dem_utm25s.tif')],
     volcano: [await volcanoFile()],
-    etopo60: [here('../../data/etopo60.tif'), '--outlets', 'deepest'],
+    etopo60: [here('../data/etopo60.tif'), '--outlets', 'deepest'],
   };
   const levels = [];
   for (const [name, given] of Object.entries(terrains)) {
@@ -30,7 +30,7 @@ try {
       levels.push(`${name}-${neighbours}=${join(out, 'brim-level.tif')}`);
     }
   }
-  const { status } = spawnSync(process.execPath, [here('run.mjs'), '--levels', ...levels], {
+  const { status } = spawnSync(process.execPath, [here('oracles/run.mjs'), '--levels', ...levels], {
     stdio: 'inherit',
   });
   process.exitCode = status ?? 1;
@@ -40,9 +40,9 @@ try {
 
 /** The volcano has no file of its own: its heights go into one, at a place that stands for none. */
 async function volcanoFile() {
-  const relief = new URL('../../../node_modules/vega-datasets/data/volcano.json', import.meta.url);
+  const relief = new URL('../../node_modules/vega-datasets/data/volcano.json', import.meta.url);
   const { width, height, values } = JSON.parse(readFileSync(relief, 'utf8'));
-  const source = await fileSource(here('../../data/olinda_dem_utm25s.tif'));
+  const source = await fileSource(here('../data/olinda_dem_utm25s.tif'));
   const { georeference } = await openTerrain([source], { verticalUnit: 'm' });
   const bytes = cloudOptimizedGeoTiff({
     width,
