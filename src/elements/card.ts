@@ -2,7 +2,7 @@ import { type CSSResultGroup, html, LitElement, type PropertyDeclarations, type 
 import { look } from './look.ts';
 import type { Session, SessionChange, SessionState } from './session.ts';
 import { SessionLink } from './session-link.ts';
-import { type Tone, toneAround, watchTone } from './tone.ts';
+import { toneAround, watchTone } from './tone.ts';
 import { Voice } from './voice.ts';
 
 /** What every card shares: the session of its host, its words, its look. */
@@ -17,7 +17,6 @@ export abstract class Card extends LitElement {
 
   readonly #link = new SessionLink(this);
   #voice = new Voice();
-  #tone: Tone = 'light';
   #endWatch: (() => void) | undefined;
 
   constructor() {
@@ -39,11 +38,7 @@ export abstract class Card extends LitElement {
 
   override connectedCallback(): void {
     super.connectedCallback();
-    this.#tone = toneAround(this);
-    this.#endWatch = watchTone(() => {
-      this.#tone = toneAround(this);
-      this.requestUpdate();
-    });
+    this.#endWatch = watchTone(() => this.requestUpdate());
   }
 
   override disconnectedCallback(): void {
@@ -60,8 +55,9 @@ export abstract class Card extends LitElement {
 
   /** The card around a content. */
   protected card(heading: string, content: unknown): TemplateResult {
+    // Only now: inside a host that has not rendered yet, a card is not laid out and has no colours around it.
     return html`
-      <section part="card" class="card ${this.#tone}" aria-labelledby="heading" lang=${this.#voice.lang}>
+      <section part="card" class="card ${toneAround(this)}" aria-labelledby="heading" lang=${this.#voice.lang}>
         <h2 part="heading" id="heading">${heading}</h2>
         ${this.session ? content : html`<p part="hint" class="hint">${this.#voice.say('needsHost')}</p>`}
         <slot></slot>
