@@ -78,7 +78,6 @@ export class BrimSpillPath extends Card {
     if (!session || !state?.surveyed) return nothing;
     const { picking, selected, ponds, map, surveyed } = state;
     const pond = selected === null ? undefined : ponds?.byId.get(selected);
-    const pit = pond && pitOf(surveyed.view, pond.id);
     return html`
       <p part="hint" class="hint">${voice.say('pathHint')}</p>
       <div class="row screen-only">
@@ -96,8 +95,8 @@ export class BrimSpillPath extends Card {
         }
         <button
           type="button"
-          ?disabled=${!pit}
-          @click=${() => pit && this.#ask({ from: pit.join(','), crs: null })}
+          ?disabled=${!pond}
+          @click=${() => pond && this.#fromPond(pond.id)}
         >
           ${pond ? voice.say('fromPond', { number: pond.number }) : voice.say('fromNoPond')}
         </button>
@@ -132,6 +131,12 @@ export class BrimSpillPath extends Card {
       },
       onClear: () => session.put({ path: null, leg: null }),
     });
+  }
+
+  #fromPond(pond: string): void {
+    const view = this.state?.surveyed?.view;
+    const pit = view && pitOf(view, pond);
+    if (pit) this.#ask({ from: pit.join(','), crs: null });
   }
 
   #ask({ from, crs }: AskedPlace): void {

@@ -96,13 +96,11 @@ export class BrimTerrain extends Card {
     if (!this.session) return;
     if (this.#isAsked && !asked.some((name) => changed.has(name))) return;
     this.#isAsked = true;
-    const addresses = (this.src ?? '').split(/\s+/).filter((address) => address !== '');
-    if (addresses.length === 0) return;
-    const terrain = addresses.map((address) => new URL(address, document.baseURI).href);
-    void this.#survey(
-      terrain,
-      terrain.map((address) => decodeURIComponent(new URL(address).pathname.split('/').pop() ?? address)),
-    );
+    const terrain = (this.src ?? '')
+      .split(/\s+/)
+      .filter((address) => address !== '')
+      .map(absolute);
+    if (terrain.length > 0) void this.#survey(terrain, terrain.map(lastPart));
   }
 
   protected override render(): unknown {
@@ -154,6 +152,19 @@ export class BrimTerrain extends Card {
       names,
     );
   }
+}
+
+/** What is no address stays as it is; the reader then says so in words. */
+function absolute(address: string): string {
+  try {
+    return new URL(address, document.baseURI).href;
+  } catch {
+    return address;
+  }
+}
+
+function lastPart(address: string): string {
+  return address.split(/[?#]/)[0].split('/').pop() || address;
 }
 
 declare global {

@@ -164,6 +164,8 @@ export const look = css`
   :focus-visible {
     outline: 2px solid var(--accent);
     outline-offset: 2px;
+    /* The status line sticks to the bottom and must not hide what has the focus. */
+    scroll-margin-block: 5rem;
   }
   fieldset {
     border: 0;

@@ -106,7 +106,9 @@ export class Measures {
 
   #fixed(value: number, decimals: number, key: MessageKey): string {
     const digits = { minimumFractionDigits: decimals, maximumFractionDigits: decimals };
-    return this.#number(value, digits) + nbsp + this.#symbol(key);
+    // What rounds to nothing has no sign.
+    const steady = Math.abs(value) < 0.5 * 10 ** -decimals ? 0 : value;
+    return this.#number(steady, digits) + nbsp + this.#symbol(key);
   }
 
   #figures(value: number, key: MessageKey, figures = 3): string {
@@ -116,7 +118,6 @@ export class Measures {
   }
 
   #number(value: number, options: Intl.NumberFormatOptions): string {
-    // −0 is 0 to a reader.
-    return new Intl.NumberFormat(numberTag(this.lang), options).format(value === 0 ? 0 : value);
+    return new Intl.NumberFormat(numberTag(this.lang), options).format(value);
   }
 }

@@ -49,7 +49,7 @@ export function placeForm(
           @change=${({ currentTarget }: Event) => onCrs((currentTarget as HTMLSelectElement).value as PlaceCrs)}
         >
           ${choices.map(
-            ([value, label]) => html`<option value=${value} ?selected=${value === crs}>${label}</option>`,
+            ([value, label]) => html`<option value=${value} .selected=${value === crs}>${label}</option>`,
           )}
         </select>
       </label>

@@ -38,10 +38,16 @@ export function unitQuestion(
 
 /** The vertical unit in use, to change. */
 export function unitChoice(voice: Voice, unit: string, answer: (unit: string) => void): TemplateResult {
-  const change = ({ currentTarget }: Event): void => answer((currentTarget as HTMLSelectElement).value);
+  const change = ({ currentTarget }: Event): void => {
+    const select = currentTarget as HTMLSelectElement;
+    const { value } = select;
+    // The unit in use stays shown until the terrain is surveyed in the new one.
+    select.value = unit;
+    answer(value);
+  };
   return html`
     <select aria-label=${voice.say('unit')} @change=${change}>
-      ${units.map(([value, key]) => html`<option value=${value} ?selected=${value === unit}>${voice.say(key)}</option>`)}
+      ${units.map(([value, key]) => html`<option value=${value} .selected=${value === unit}>${voice.say(key)}</option>`)}
     </select>
   `;
 }
