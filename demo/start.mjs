@@ -1,24 +1,46 @@
-// Fills the invented town to the brim and traces an overflow through it: `npm start`.
-import { existsSync, readFileSync } from 'node:fs';
-import { relative } from 'node:path';
+// Builds the demo site, serves it and opens it in the browser: `npm start`. OVERBRIM_PORT names a port; Ctrl-C ends it.
+import { spawn } from 'node:child_process';
 import { fileURLToPath } from 'node:url';
-import { main } from 'overbrim/node';
+import { preview } from 'vite';
+import { buildSite } from './site.mjs';
 
-const pathOf = (file) => fileURLToPath(new URL(file, import.meta.url));
-if (!existsSync(pathOf('town/elevation.tif'))) await import('./town/make-town.mjs');
+const folder = fileURLToPath(new URL('../out/site', import.meta.url));
+const named = process.env.OVERBRIM_PORT;
+const port = named === undefined || named === '' ? 8080 : Number(named);
+if (!Number.isInteger(port) || port < 1 || port > 65535) {
+  console.error(`OVERBRIM_PORT is ${named}, which is no port; name one from 1 to 65535 or leave it out.`);
+  process.exit(2);
+}
 
-const { grid, underpass } = JSON.parse(readFileSync(pathOf('town/town.json'), 'utf8'));
-const east = grid.west + (underpass.column + 0.5) * grid.cellM;
-const north = grid.north - (underpass.row + 0.5) * grid.cellM;
+await buildSite(folder);
+const server = await preview({
+  configFile: false,
+  logLevel: 'error',
+  build: { outDir: folder },
+  // The next free port is taken where this one is not.
+  preview: { port, host: '127.0.0.1' },
+});
+const address = server.resolvedUrls?.local[0] ?? `http://127.0.0.1:${port}/`;
+console.log(`
+Brimsallow, an invented town:           ${address}
+The same town's page, by one script tag: ${address}plain/
+Ctrl-C ends the server.`);
+openInBrowser(address);
 
-await run('depressions', '--min-depth', '0.1');
-await run('spill-path', '--from', `${east},${north}`);
+for (const signal of ['SIGINT', 'SIGTERM']) {
+  process.once(signal, async () => {
+    await server.close();
+    process.exit(0);
+  });
+}
 
-/** Runs the command as typed below, its results in a folder that carries its name. */
-async function run(id, ...options) {
-  const terrain = relative('.', pathOf('town/elevation.tif'));
-  const args = ['run', id, '--terrain', terrain, ...options, '--out', `out/town/${id}`];
-  console.log(`\noverbrim ${args.join(' ')}`);
-  const code = await main(args, process);
-  if (code !== 0) process.exit(code);
+/** Where there is no browser, the address above is enough. */
+function openInBrowser(url) {
+  if (process.env.CI) return;
+  const [command, ...args] = { darwin: ['open', url], win32: ['cmd', '/c', 'start', '', url] }[
+    process.platform
+  ] ?? ['xdg-open', url];
+  spawn(command, args, { stdio: 'ignore', detached: true })
+    .on('error', () => {})
+    .unref();
 }
