@@ -8,7 +8,7 @@ import { look } from './look.ts';
 import type { UnitSystem } from './measures.ts';
 import type { Engine } from './running.ts';
 import { Session, type SessionChange } from './session.ts';
-import { sessionContext } from './session-link.ts';
+import { hostConnected, sessionContext } from './session-link.ts';
 import { statusLine, statusLook } from './status-line.ts';
 import { toneAround, watchTone } from './tone.ts';
 import { Voice } from './voice.ts';
@@ -86,6 +86,7 @@ export class BrimHost extends LitElement {
 
   override connectedCallback(): void {
     super.connectedCallback();
+    this.dispatchEvent(new Event(hostConnected, { bubbles: true, composed: true }));
     this.#look();
     this.#endWatch = watchTone(() => this.session.put({ tone: toneAround(this) }));
     this.session.put({ tone: toneAround(this), lang: this.#language() });

@@ -110,6 +110,14 @@ export const look = css`
     padding-inline-end: var(--space);
     margin-inline-end: calc(var(--space) * -1);
   }
+  .unseen {
+    position: absolute;
+    width: 1px;
+    height: 1px;
+    overflow: hidden;
+    clip-path: inset(50%);
+    white-space: nowrap;
+  }
   .unit {
     white-space: nowrap;
   }

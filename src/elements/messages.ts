@@ -103,7 +103,6 @@ const en = {
   columnCapacity: 'Holds',
   columnArea: 'Area',
   columnDepth: 'Depth',
-  pondOption: 'Pond {number}: holds {capacity}, area {area}, depth {depth}',
   pageOf: '{from}–{to} of {count}',
   previousPage: 'Previous ponds',
   nextPage: 'Next ponds',

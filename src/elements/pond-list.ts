@@ -1,4 +1,5 @@
 import { css, html, nothing, type TemplateResult } from 'lit';
+import type { MessageKey } from './messages.ts';
 import type { Pond } from './ponds.ts';
 import type { Voice } from './voice.ts';
 
@@ -139,9 +140,9 @@ interface Option {
 
 function option({ say, measures }: Voice, pond: Pond, { count, isSelected, isStop, onSelect }: Option) {
   const { id, number } = pond;
-  const capacity = measures.volume(pond.capacityM3);
-  const area = measures.area(pond.areaM2);
-  const depth = measures.depth(pond.depthM);
+  // Each figure carries the head of its column for those who do not see the columns.
+  const cell = (head: MessageKey, figure: string): TemplateResult =>
+    html`<span><span class="unseen">${say(head)} </span>${figure}</span>`;
   return html`
     <li
       class="pond"
@@ -150,11 +151,11 @@ function option({ say, measures }: Voice, pond: Pond, { count, isSelected, isSto
       aria-selected=${isSelected}
       aria-posinset=${number}
       aria-setsize=${count}
-      aria-label=${say('pondOption', { number, capacity, area, depth })}
       data-pond=${id}
       @click=${() => onSelect(id)}
     >
-      <span>${measures.count(number)}</span><span>${capacity}</span><span>${area}</span><span>${depth}</span>
+      ${cell('columnNumber', measures.count(number))} ${cell('columnCapacity', measures.volume(pond.capacityM3))}
+      ${cell('columnArea', measures.area(pond.areaM2))} ${cell('columnDepth', measures.depth(pond.depthM))}
     </li>
   `;
 }

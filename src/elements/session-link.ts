@@ -5,6 +5,9 @@ import type { Session, SessionChange } from './session.ts';
 /** How elements inside a host find its session. */
 export const sessionContext = createContext<Session>(Symbol.for('overbrim.session'));
 
+/** Event by which a host tells the page that it is there. */
+export const hostConnected = 'brim-host-connected';
+
 /** An element that may name its host by id and hears of changes. */
 interface Linked extends ReactiveElement {
   readonly host: string | null;
@@ -28,16 +31,16 @@ export class SessionLink implements ReactiveController {
     return this.#session;
   }
 
+  readonly #onHost = (): void => this.#find();
+
   hostConnected(): void {
     this.#find();
-    // A host that is defined, or parsed, later than this element could not answer yet.
-    customElements.whenDefined('brim-host').then(() => this.#find());
-    if (document.readyState === 'loading') {
-      document.addEventListener('DOMContentLoaded', () => this.#find(), { once: true });
-    }
+    // A host that is defined, or comes to the page, later than this element could not answer yet.
+    document.addEventListener(hostConnected, this.#onHost);
   }
 
   hostDisconnected(): void {
+    document.removeEventListener(hostConnected, this.#onHost);
     this.#join(undefined);
   }
 

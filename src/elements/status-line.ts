@@ -16,7 +16,6 @@ export const statusLook = css`
   }
   .caution {
     padding: 0.5rem 0.75rem;
-    background: none;
   }
   .status > * + * {
     margin-block-start: 0.5rem;

@@ -1,12 +1,69 @@
 import '../../../src/elements/index.ts';
+import VectorLayer from 'ol/layer/Vector.js';
 import OlMap from 'ol/Map.js';
-import { fromLonLat } from 'ol/proj.js';
+import { fromLonLat, toLonLat } from 'ol/proj.js';
 import View from 'ol/View.js';
+import type { SessionState } from '../../../src/elements/session.ts';
 
-// A page that makes its map by itself, in web mercator, and hands it to the host as a global variable.
-const map = new OlMap({
+/** A map that the page makes by itself, in web mercator. */
+const townMap = new OlMap({
   target: 'map',
   controls: [],
   view: new View({ center: fromLonLat([0, 0]), zoom: 2 }),
 });
-Object.assign(globalThis, { townMap: map });
+
+function mapOnPage(): DOMRect {
+  const element = document.getElementById('map');
+  if (!element) throw new Error('The page has no place for a map.');
+  return element.getBoundingClientRect();
+}
+
+/** What tests ask of the page. */
+const elementsStage = {
+  state(): SessionState {
+    const host = document.querySelector('brim-host');
+    if (!host) throw new Error('The page has no host.');
+    return host.session.state;
+  },
+
+  /** Where a listed pond lies on the page, once the view has come to rest. */
+  async pixelInside(place: number): Promise<{ x: number; y: number }> {
+    const { layers, ponds } = elementsStage.state();
+    const inside = layers?.ponds.get(ponds?.list[place]?.id ?? '')?.inside;
+    if (!inside) throw new Error(`The map has no pond at place ${place} of the list.`);
+    await new Promise<void>((done) => {
+      townMap.once('rendercomplete', () => done());
+      townMap.render();
+    });
+    const [x, y] = townMap.getPixelFromCoordinate([...inside]) ?? [];
+    const { left, top } = mapOnPage();
+    return { x: left + x, y: top + y };
+  },
+
+  /** The place under a pixel of the page, as a reader may type it. */
+  typedAt(x: number, y: number): { view: string; lonLat: string } {
+    const { left, top } = mapOnPage();
+    const place = townMap.getCoordinateFromPixel([x - left, y - top]) ?? [];
+    return { view: place.join(' '), lonLat: toLonLat(place).join(', ') };
+  },
+
+  path: (): string => JSON.stringify(elementsStage.state().path?.lines),
+
+  /** Lines drawn under the path, to mark a leg. */
+  markedLegs(): number {
+    const { layers } = elementsStage.state();
+    const all = layers?.group.getLayers().getArray() ?? [];
+    const below = all.find((_, i) => all[i + 1] === layers?.path);
+    if (!(below instanceof VectorLayer)) throw new Error('No layer lies under the path.');
+    return below.getSource()?.getFeatures().length ?? 0;
+  },
+};
+
+declare global {
+  interface Window {
+    townMap: OlMap;
+    elementsStage: typeof elementsStage;
+  }
+}
+
+Object.assign(window, { townMap, elementsStage });
