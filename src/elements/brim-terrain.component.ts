@@ -108,7 +108,7 @@ export class BrimTerrain extends Card {
     const surveyed = this.state?.surveyed ?? null;
     const withoutUnit = this.state?.withoutUnit ?? null;
     const drop = fileDrop(voice, {
-      isLoaded: surveyed !== null,
+      isLoaded: surveyed !== null || withoutUnit !== null,
       isOver: this.isOver,
       onOver: (isOver) => {
         this.isOver = isOver;

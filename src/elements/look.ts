@@ -140,6 +140,18 @@ export const look = css`
     padding: 0.1875rem 0.5rem;
     max-width: 100%;
   }
+  input[type='radio'] {
+    min-height: 0;
+    margin: 0 0.25rem;
+    accent-color: var(--accent);
+  }
+  .option {
+    min-height: 1.5rem;
+    cursor: pointer;
+  }
+  fieldset > .option {
+    margin-block-start: 0.25rem;
+  }
   button {
     cursor: pointer;
     background: transparent;

@@ -17,8 +17,9 @@ export const statusLook = css`
   .caution {
     padding: 0.5rem 0.75rem;
   }
-  .status > * + * {
-    margin-block-start: 0.5rem;
+  .job,
+  .fault {
+    margin-block-end: 0.5rem;
   }
   .job {
     display: grid;

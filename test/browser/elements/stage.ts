@@ -16,7 +16,7 @@ const definingModules = {
 };
 
 /** A script on the OpenLayers of the named package of node_modules. */
-async function script(entry: string, format: 'es' | 'iife', ol = 'ol'): Promise<string> {
+async function script(entry: URL, format: 'es' | 'iife', ol = 'ol'): Promise<string> {
   const result = await build({
     configFile: false,
     logLevel: 'error',
@@ -27,7 +27,7 @@ async function script(entry: string, format: 'es' | 'iife', ol = 'ol'): Promise<
       write: false,
       minify: false,
       target: 'es2022',
-      lib: { entry: here(entry), formats: [format], fileName: 'page', name: 'page' },
+      lib: { entry: fileURLToPath(entry), formats: [format], fileName: 'page', name: 'page' },
       rolldownOptions: { output: { codeSplitting: false } },
     },
   });
@@ -46,8 +46,8 @@ export interface Stage {
 /** Serves the elements with the engine as its own file, under a strict content security policy. */
 export async function serveStage(body: string, files: Served = {}, ol = 'ol'): Promise<Stage> {
   const [page, worker] = await Promise.all([
-    script('stage-page.ts', 'es', ol),
-    script('../../../src/engine/worker.ts', 'iife'),
+    script(new URL('stage-page.ts', import.meta.url), 'es', ol),
+    script(new URL('../../../src/engine/worker.ts', import.meta.url), 'iife'),
   ]);
   const served = new Map<string, string | Uint8Array>([
     ['/', html(body)],
