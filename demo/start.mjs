@@ -1,10 +1,13 @@
-// Builds the demo site, serves it and opens it in the browser: `npm start`. OVERBRIM_PORT names a port; Ctrl-C ends it.
+// Builds the demo site, serves it and opens it in the browser: `npm start`, or `node demo/start.mjs [FOLDER]` with
+// another folder for the site. OVERBRIM_PORT names a port; Ctrl-C ends it.
+
 import { spawn } from 'node:child_process';
+import { resolve } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { preview } from 'vite';
 import { buildSite } from './site.mjs';
 
-const folder = fileURLToPath(new URL('../out/site', import.meta.url));
+const folder = resolve(process.argv[2] ?? fileURLToPath(new URL('../out/site', import.meta.url)));
 const named = process.env.OVERBRIM_PORT;
 const port = named === undefined || named === '' ? 8080 : Number(named);
 if (!Number.isInteger(port) || port < 1 || port > 65535) {

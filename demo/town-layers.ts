@@ -1,3 +1,4 @@
+import type Feature from 'ol/Feature.js';
 import type { FeatureLike } from 'ol/Feature.js';
 import GeoJSON from 'ol/format/GeoJSON.js';
 import VectorLayer from 'ol/layer/Vector.js';
@@ -18,7 +19,7 @@ export function townLayers(folder: string, dark: MediaQueryList): VectorLayer[] 
     { layer: new VectorLayer({ source: file('land-cover') }), style: coverStyle },
     { layer: new VectorLayer({ source: streets }), style: streetStyle },
     { layer: new VectorLayer({ source: file('buildings') }), style: buildingStyle },
-    // Above the water, below nothing: names stay readable.
+    // Above everything, so that names stay readable.
     { layer: new VectorLayer({ source: streets, declutter: true, zIndex: 1 }), style: nameStyle },
   ];
   const ink = (): void => {
@@ -29,7 +30,7 @@ export function townLayers(folder: string, dark: MediaQueryList): VectorLayer[] 
   return drawn.map(({ layer }) => layer);
 
   function file(name: string): VectorSource {
-    return new VectorSource({ url: `${folder}${name}.geojson`, format: new GeoJSON() });
+    return new VectorSource({ url: `${folder}${name}.geojson`, format: new GeoJSON<Feature>() });
   }
 }
 
