@@ -30,7 +30,7 @@ export {
   usualOutlets,
 } from './outlets.ts';
 export { type PondMeasures, pondMeasures } from './pond-measures.ts';
-export { type PondOutline, pondOfCells, pondOutlines } from './pond-outlines.ts';
+export { type OutlineColumns, type PondOutline, pondOfCells, pondOutlines } from './pond-outlines.ts';
 export { ReceiverField } from './receiver-field.ts';
 export type { Polygon } from './rings.ts';
 export { shortestWay } from './shortest-way.ts';

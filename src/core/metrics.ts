@@ -1,3 +1,5 @@
+import { OverbrimError } from './error.ts';
+
 /**
  * The true sizes of a grid's cells, one value a row, in metres and square metres.
  * On a projected grid all rows are equal (`uniform`); on a geographic one they follow the ellipsoid.
@@ -15,8 +17,12 @@ export interface RowMetrics {
   readonly areaBoundM2: number;
 }
 
-/** Metrics of a projected grid: every cell is `cellWidthM × cellHeightM`. */
+/**
+ * Metrics of a projected grid: every cell is `cellWidthM × cellHeightM`.
+ * @throws OverbrimError `bad-input` when a size is not a positive number.
+ */
 export function projectedMetrics(height: number, cellWidthM: number, cellHeightM: number): RowMetrics {
+  checkSizes(cellWidthM, cellHeightM, 'metres');
   return {
     uniform: true,
     eastM: new Float64Array(height).fill(cellWidthM),
@@ -44,6 +50,7 @@ const radians = Math.PI / 180;
  * Area between two parallels: `(b² Δλ / 2) [q(φ₂) − q(φ₁)]`, `q = sin φ / (1 − e² sin² φ) + atanh(e sin φ) / e`
  * (authalic latitude; Snyder, Map Projections: A Working Manual, 1987, eq. 3-12 and 3-18). Radii of curvature
  * for the lengths from the same source, eq. 4-18 to 4-21, taken at the row's middle.
+ * @throws OverbrimError `bad-input` when a size is not a positive number.
  */
 export function geographicMetrics(
   height: number,
@@ -52,6 +59,7 @@ export function geographicMetrics(
   cellHeightDeg: number,
   ellipsoid: Ellipsoid = wgs84,
 ): RowMetrics {
+  checkSizes(cellWidthDeg, cellHeightDeg, 'degrees');
   const a = ellipsoid.semiMajorM;
   const b = ellipsoid.semiMinorM;
   const e2 = (a * a - b * b) / (a * a);
@@ -85,4 +93,13 @@ export function geographicMetrics(
 
 function clamped(latitudeDeg: number): number {
   return Math.min(90, Math.max(-90, latitudeDeg));
+}
+
+function checkSizes(width: number, height: number, unit: string): void {
+  if (!(width > 0 && height > 0 && width * height < Number.POSITIVE_INFINITY)) {
+    throw new OverbrimError(
+      'bad-input',
+      `The cells are ${width} × ${height} ${unit}; expected two positive numbers.`,
+    );
+  }
 }

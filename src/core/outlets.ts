@@ -8,8 +8,9 @@ export interface OutletRules {
   readonly edges: 'open' | 'closed';
   /** `rim`: pieces of void joined to the rim drain like the rim, enclosed ones are walls · `walls`: no piece drains · `all`: every piece drains. */
   readonly voids: 'rim' | 'walls' | 'all';
-  /** Level of the water beyond the rim, and in the pieces of void that drain. */
+  /** Level of the water beyond the rim, and in voids that drain like it. */
   readonly edgeLevelM: number;
+  /** Level of the water in pieces of void that drain; −∞ leaves those that drain like the rim at its level. */
   readonly voidLevelM: number;
   /** Narrow gaps between the files of a mosaic: walls, or open like an outlet. */
   readonly gaps: 'walls' | 'open';
@@ -53,11 +54,12 @@ export function outletSills(grid: Grid, survey: Survey, rules: OutletRules): Sil
     });
   }
   survey.besideLeaf.forEach((leaf, i) => {
-    if (!drains(rules, survey, survey.besidePiece[i])) return;
+    const levelM = levelInVoid(rules, survey, survey.besidePiece[i]);
+    if (levelM === null) return;
     found.push({
       leaf,
       cell: survey.besideCell[i],
-      elevationM: Math.max(rules.voidLevelM, survey.besideElevationM[i]),
+      elevationM: Math.max(levelM, survey.besideElevationM[i]),
     });
   });
   const named = new Map<number, { leaf: number; cell: number; elevationM: number }>();
@@ -76,10 +78,13 @@ export function outletSills(grid: Grid, survey: Survey, rules: OutletRules): Sil
   return sills;
 }
 
-function drains({ edges, voids, gaps }: OutletRules, survey: Survey, piece: number): boolean {
-  if (voids === 'all') return true;
-  if (survey.voidIsGap[piece] === 1) return gaps === 'open';
-  return voids === 'rim' && edges === 'open' && survey.voidOnRim[piece] === 1;
+/** Level at which a piece of void takes water, null where it is a wall. */
+function levelInVoid(rules: OutletRules, survey: Survey, piece: number): number | null {
+  const { edges, voids, gaps, edgeLevelM, voidLevelM } = rules;
+  const isGap = survey.voidIsGap[piece] === 1;
+  const isLikeRim = !isGap && edges === 'open' && voids !== 'walls' && survey.voidOnRim[piece] === 1;
+  if (isLikeRim) return voidLevelM === Number.NEGATIVE_INFINITY ? edgeLevelM : voidLevelM;
+  return voids === 'all' || (isGap && gaps === 'open') ? voidLevelM : null;
 }
 
 /**

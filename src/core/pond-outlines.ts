@@ -5,6 +5,14 @@ import type { Grid } from './grid.ts';
 import { directionSteps, directions, type Polygon, polygonsOf, reversed, sideStarts } from './rings.ts';
 import type { Survey } from './survey.ts';
 
+/** The columns in which outlines are drawn, where they are not the grid's own from west to east. */
+export interface OutlineColumns {
+  /** The grid's column that each stands for; one that is cut through its middle stands twice. */
+  readonly source: Int32Array;
+  /** Column of corners at which outlines are cut, −1 = none. */
+  readonly cut: number;
+}
+
 export interface PondOutline {
   readonly node: number;
   readonly polygons: readonly Polygon[];
@@ -12,8 +20,7 @@ export interface PondOutline {
 
 /**
  * Outlines of the kept ponds one after the other, nested ones (which need `nested`) before those that hold them.
- * Where a grid wraps, outlines are cut at its seam; `cutColumn` cuts at one more column of vertices (an
- * antimeridian inside the grid).
+ * Where a grid wraps, outlines are cut at its seam; `columns` lets them start and be cut elsewhere.
  *
  * Each cell belongs to the smallest pond that wets it. A pond's boundary is that of its children, with the sides
  * of its own cells added, or taken away where they met; so deep nesting costs no more than the boundaries.
@@ -24,20 +31,29 @@ export function* pondOutlines(
   drainage: Drainage,
   depressions: Depressions,
   kept: Uint8Array,
-  options: { nested: boolean; cutColumn?: number },
+  options: { nested: boolean; columns?: OutlineColumns },
 ): Generator<PondOutline> {
   const tree = depressionTree(depressions);
-  const group = pondOfCells(grid, survey, drainage, depressions, options.nested);
-  const { starts, edges } = sidesOfGroups(grid, group, depressions.parent.length, options.cutColumn ?? -1);
-  if (!options.nested) {
+  const { columns, nested } = options;
+  const own = pondOfCells(grid, survey, drainage, depressions, nested);
+  const group = columns === undefined ? own : rearranged(own, grid, columns.source);
+  const width = columns === undefined ? grid.width : columns.source.length;
+  const cut = columns?.cut ?? -1;
+  const { starts, edges } = sidesOfGroups(
+    { width, height: grid.height },
+    group,
+    depressions.parent.length,
+    cut,
+  );
+  if (!nested) {
     for (let node = 0; node < kept.length; node++) {
       if (kept[node] === 1) {
-        yield { node, polygons: polygonsOf(edges.subarray(starts[node], starts[node + 1]), grid.width) };
+        yield { node, polygons: polygonsOf(edges.subarray(starts[node], starts[node + 1]), width) };
       }
     }
     return;
   }
-  const toggle = boundaryToggle(grid.width, options.cutColumn ?? -1);
+  const toggle = boundaryToggle(width, cut);
   const boundaries = new Map<number, Set<number>>();
   for (let i = tree.order.length - 1; i >= 0; i--) {
     const node = tree.order[i];
@@ -46,7 +62,7 @@ export function* pondOutlines(
     for (let k = starts[node]; k < starts[node + 1]; k++) {
       toggle(boundary, edges[k]);
     }
-    if (kept[node] === 1) yield { node, polygons: polygonsOf(boundary, grid.width) };
+    if (kept[node] === 1) yield { node, polygons: polygonsOf(boundary, width) };
     const up = depressions.parent[node];
     if (up >= 0 && boundary.size > 0) boundaries.set(up, merged(boundaries.get(up), boundary, toggle));
   }
@@ -76,9 +92,20 @@ export function pondOfCells(
   return group;
 }
 
+/** The ponds of cells in other columns. */
+function rearranged(group: Int32Array, { width, height }: Grid, source: Int32Array): Int32Array {
+  const across = source.length;
+  const out = new Int32Array(across * height);
+  for (let row = 0; row < height; row++) {
+    for (let column = 0; column < across; column++)
+      out[row * across + column] = group[row * width + source[column]];
+  }
+  return out;
+}
+
 /** The sides of cells that meet another group, as directed edges, by group. */
 function sidesOfGroups(
-  grid: Grid,
+  grid: Pick<Grid, 'width' | 'height'>,
   group: Int32Array,
   groups: number,
   cutColumn: number,

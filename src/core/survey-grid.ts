@@ -22,7 +22,7 @@ const usualTile = 256;
 /**
  * Surveys a grid tile by tile. The same grid, neighbours and made pits give the same bits for any tile size and
  * order.
- * @throws OverbrimError `bad-input` when the tile size is out of range.
+ * @throws OverbrimError `bad-input` when the tile size is out of range or the neighbours are not 8 or 4.
  */
 export function surveyOf(grid: Grid, options: SurveyOptions = {}): Survey {
   const steps = surveySteps(grid, options);
@@ -42,6 +42,9 @@ export function* surveySteps(grid: Grid, options: SurveyOptions = {}): Generator
     );
   }
   const neighbours = options.neighbours ?? 8;
+  if (neighbours !== 4 && neighbours !== 8) {
+    throw new OverbrimError('bad-input', `The number of neighbours is ${neighbours}; expected 8 or 4.`);
+  }
   const madePits = options.madePits ?? [];
   const tiles = tilesOf(grid.width, grid.height, size);
   const room = tileRoom(Math.min(size, Math.max(grid.width, grid.height)));

@@ -2,6 +2,7 @@ import { defineProcess, type JobContext } from '../host/index.ts';
 import { cloudOptimizedGeoTiff } from '../raster/write-cog.ts';
 import { brimLevelRaster } from './brim-raster.ts';
 import { brimful } from './brimful.ts';
+import { counted } from './counted.ts';
 import { featureCollectionText, figure } from './geojson-text.ts';
 import { keptPonds, pondFeatures, pourPointFeatures } from './pond-features.ts';
 import { terrainInputs } from './terrain-inputs.ts';
@@ -49,7 +50,7 @@ const description = {
     ponds: {
       title: 'Ponds',
       description:
-        'One MultiPolygon a pond, along cell edges, in CRS84, with its levels, sizes and what it spills into.',
+        'One MultiPolygon a pond, along cell edges, in CRS84, with its levels, sizes and what it spills into (with nested ponds, the pond beside it in the same parent).',
       schema: { type: 'object', contentMediaType: 'application/geo+json' },
     },
     'pour-points': {
@@ -151,7 +152,7 @@ function noteOutletLevels(analysis: Awaited<ReturnType<typeof brimful>>, context
   }
   if (held > 0) {
     context.note(
-      `${held} outermost ponds stand at the level of water outside an outlet (heldByOutlet); their capacity is no storage of the ground.`,
+      `${counted(held, 'outermost pond stands', 'outermost ponds stand')} at the level of water outside an outlet (heldByOutlet); ${held === 1 ? 'its' : 'their'} capacity is no storage of the ground.`,
     );
   }
 }

@@ -1,11 +1,9 @@
-import type { Feature, Position } from 'geojson';
+import type { Feature } from 'geojson';
 import { type Polygon, pondOutlines, spillsInto } from '../core/index.ts';
-import { cornerAt } from '../raster/place.ts';
-import type { Terrain } from '../raster/terrain.ts';
-import { toCrs84 } from '../raster/transform.ts';
 import type { Brimful } from './brimful.ts';
-import { degrees, figure, float32Figure } from './geojson-text.ts';
+import { figure, float32Figure } from './geojson-text.ts';
 import { cellLonLat } from './lon-lat.ts';
+import { outlinePlacing } from './outline-placing.ts';
 import { pondNames } from './pond-names.ts';
 
 /** Least sizes of ponds that are written. */
@@ -36,12 +34,9 @@ export function* pondFeatures(analysis: Brimful, kept: Uint8Array, nested: boole
   const { terrain, grid, survey, drainage, depressions, measures } = analysis;
   const nameOf = pondNames(survey, drainage, depressions);
   const into = spillsInto(survey, drainage, depressions, kept);
-  const cutColumn = antimeridianColumn(terrain);
-  const ring = ringPlacer(terrain, cutColumn);
-  for (const { node, polygons } of pondOutlines(grid, survey, drainage, depressions, kept, {
-    nested,
-    cutColumn,
-  })) {
+  const placing = outlinePlacing(terrain);
+  const options = placing.columns === undefined ? { nested } : { nested, columns: placing.columns };
+  for (const { node, polygons } of pondOutlines(grid, survey, drainage, depressions, kept, options)) {
     const spillElevationM = float32Figure(depressions.spillElevationM[node]);
     const pitElevationM = float32Figure(depressions.pitElevationM[node]);
     const sillCell = drainage.tree.sillCell[depressions.pourSill[node]];
@@ -51,7 +46,7 @@ export function* pondFeatures(analysis: Brimful, kept: Uint8Array, nested: boole
       id,
       geometry: {
         type: 'MultiPolygon',
-        coordinates: polygons.map((polygon: Polygon) => [polygon.outer, ...polygon.holes].map(ring)),
+        coordinates: polygons.map((polygon: Polygon) => [polygon.outer, ...polygon.holes].map(placing.ring)),
       },
       properties: {
         id,
@@ -90,35 +85,4 @@ export function* pourPointFeatures(analysis: Brimful, kept: Uint8Array): Generat
       },
     };
   }
-}
-
-/** The column of cell corners at 180° where it lies inside a geographic grid, −1 otherwise. */
-export function antimeridianColumn({ grid, georeference }: Terrain): number {
-  if (georeference.crs.kind !== 'geographic') return -1;
-  const column = Math.round((180 - georeference.west) / georeference.cellWidth);
-  const offset = georeference.west + column * georeference.cellWidth - 180;
-  const isEdge = Math.abs(offset) < georeference.cellWidth * 1e-3;
-  return isEdge && column > 0 && column < grid.width ? column : -1;
-}
-
-/** Turns rings of corner numbers into CRS84 positions; what lies east of the antimeridian comes back at −180°. */
-function ringPlacer(terrain: Terrain, cutColumn: number): (ring: readonly number[]) => Position[] {
-  const toLonLat = toCrs84(terrain.georeference.crs);
-  const across = terrain.grid.width + 1;
-  return (ring) => {
-    const isBeyond = cutColumn >= 0 && ring.some((vertex) => vertex % across > cutColumn);
-    return ring.map((vertex) => {
-      const column = vertex % across;
-      const [longitude, latitude] = toLonLat(...cornerAt(terrain, column, (vertex - column) / across));
-      return [degrees(unwrapped(longitude, isBeyond, terrain, column)), degrees(latitude)];
-    });
-  };
-}
-
-/** Projection libraries may bring longitudes back into ±180°; the grid's own longitude is the steady one. */
-function unwrapped(longitude: number, isBeyond: boolean, terrain: Terrain, column: number): number {
-  if (terrain.georeference.crs.kind !== 'geographic') return longitude;
-  const own = terrain.georeference.west + column * terrain.georeference.cellWidth;
-  const turns = Math.round((own - longitude) / 360);
-  return longitude + 360 * turns - (isBeyond ? 360 : 0);
 }

@@ -1,12 +1,15 @@
 import type { InputDescription, InputsOf } from '../host/index.ts';
 
+/** Levels are kept as float32, which ends at 3.4e38. */
+const levelSchema = { type: 'number', minimum: -3.4e38, maximum: 3.4e38 } as const;
+
 /** Inputs that every process on a terrain takes: the elevation, and where its water may leave. */
 export const terrainInputs = {
   terrain: {
     title: 'elevation file, or several as one mosaic',
     description:
       'Path or URL of a GeoTIFF with one band of ground elevations. Several files with the same CRS, cell size and alignment form one terrain; where they overlap the first named wins.',
-    schema: { type: 'string', contentMediaType: 'image/tiff; application=geotiff' },
+    schema: { type: 'string', pattern: '\\S', contentMediaType: 'image/tiff; application=geotiff' },
     maxOccurs: 'unbounded',
   },
   verticalUnit: {
@@ -59,27 +62,27 @@ export const terrainInputs = {
     title: 'further outlets: GeoJSON file, x,y, voids or deepest',
     description:
       'Where water leaves for good besides the edges: a GeoJSON file (CRS84) of points, lines or polygons, each with an optional level in metres as the property levelM; a place x,y in the CRS of the terrain or of the input crs; voids for all cells without elevation; deepest for the lowest cell.',
-    schema: { type: 'string' },
+    schema: { type: 'string', pattern: '\\S' },
     minOccurs: 0,
     maxOccurs: 'unbounded',
   },
   edgeLevel: {
     title: 'level of the water beyond the edge, metres',
     description:
-      'Where it stands higher than the ground at an open edge, water leaves at this level. Without it the ground decides.',
-    schema: { type: 'number' },
+      'Where it stands higher than the ground at an open edge, water leaves at this level; in voids joined to the edge too, unless voidLevel says otherwise. Without it the ground decides.',
+    schema: levelSchema,
     minOccurs: 0,
   },
   voidLevel: {
     title: 'level of the water in voids that take water, metres',
     description: 'Where it stands higher than the ground beside them, water leaves at this level.',
-    schema: { type: 'number' },
+    schema: levelSchema,
     minOccurs: 0,
   },
   outletLevel: {
     title: 'level of the water at further outlets, metres',
     description: 'For the input outlets, where a feature names no level of its own.',
-    schema: { type: 'number' },
+    schema: levelSchema,
     minOccurs: 0,
   },
   crs: {

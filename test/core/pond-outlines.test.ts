@@ -1,12 +1,12 @@
 import { describe, expect, it } from 'vitest';
-import { pondOfCells, pondOutlines } from '../../src/core/pond-outlines.ts';
+import { type OutlineColumns, pondOfCells, pondOutlines } from '../../src/core/pond-outlines.ts';
 import { analysisOf, pondsOf } from './property/analysis.ts';
 import type { TerrainCase } from './property/terrain-case.ts';
 import { cellsInside, ringArea } from './ring-checks.ts';
 import { terrainFromText } from './terrain-from-text.ts';
 
 /** Areas of the rings of each pond's polygons, ponds in the order written. */
-function outlines(terrain: TerrainCase, options: { nested: boolean; cutColumn?: number }) {
+function outlines(terrain: TerrainCase, options: { nested: boolean; columns?: OutlineColumns }) {
   const found = analysisOf(terrain);
   const { grid, survey, drainage, depressions } = found;
   const kept = new Uint8Array(depressions.parent.length);
@@ -46,7 +46,12 @@ describe('outlines of ponds', () => {
     ]);
     const flat = terrainFromText('9 9 9 9 9 \n 9 1 1 1 9 \n 9 9 9 9 9');
     for (const nested of [false, true]) {
-      expect(outlines(flat, { nested, cutColumn: 2 })[0].map(({ cells }) => cells)).toEqual([[6], [7, 8]]);
+      expect(
+        outlines(flat, {
+          nested,
+          columns: { source: Int32Array.of(0, 1, 2, 3, 4).slice(0, flat.width), cut: 2 },
+        })[0].map(({ cells }) => cells),
+      ).toEqual([[6], [7, 8]]);
     }
   });
 });

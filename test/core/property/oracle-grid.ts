@@ -11,14 +11,15 @@ export function oracleGrid(terrain: TerrainCase): SmallGrid {
 
 /** Cells from which water leaves: over the rim, into voids that drain, and the named ones. */
 export function outletsOf(terrain: TerrainCase): SmallOutlet[] {
-  const { z, edges, outlets, edgeLevelM, voidLevelM } = terrain;
+  const { z, edges, outlets, edgeLevelM } = terrain;
   const found: SmallOutlet[] = outlets.filter(({ cell }) => !Number.isNaN(z[cell]));
   const open = drainingVoids(terrain);
   for (let cell = 0; cell < z.length; cell++) {
     if (Number.isNaN(z[cell])) continue;
     if (edges === 'open' && isOnRim(terrain, cell)) found.push({ cell, levelM: edgeLevelM });
-    if (around(terrain, cell, terrain.neighbours).some((other) => open.has(other))) {
-      found.push({ cell, levelM: voidLevelM });
+    for (const other of around(terrain, cell, terrain.neighbours)) {
+      const levelM = open.get(other);
+      if (levelM !== undefined) found.push({ cell, levelM });
     }
   }
   return found;
@@ -58,11 +59,11 @@ export function around(
   return found;
 }
 
-/** Void cells into which water leaves. Pieces of void touch at sides and corners; a gap is a piece of its own. */
-function drainingVoids(terrain: TerrainCase): Set<number> {
-  const { z, edges, voids, gap, gaps, width } = terrain;
+/** Void cells into which water leaves, with the level there. Pieces of void touch at sides and corners; a gap is a piece of its own. */
+function drainingVoids(terrain: TerrainCase): Map<number, number> {
+  const { z, edges, voids, gap, gaps, width, edgeLevelM, voidLevelM } = terrain;
   const inGap = new Set(cellsOfGap(gap, width));
-  const open = new Set<number>();
+  const open = new Map<number, number>();
   const seen = new Set<number>();
   for (let first = 0; first < z.length; first++) {
     if (!Number.isNaN(z[first]) || seen.has(first)) continue;
@@ -75,9 +76,12 @@ function drainingVoids(terrain: TerrainCase): Set<number> {
         piece.push(other);
       }
     }
-    const onRim = voids === 'rim' && edges === 'open' && piece.some((cell) => isOnRim(terrain, cell));
-    if (voids === 'all' || (inGap.has(first) ? gaps === 'open' : onRim))
-      for (const cell of piece) open.add(cell);
+    const ofGap = inGap.has(first);
+    // Void on the rim of the data is like the rim, so water stands in it as beyond the rim unless it has its own level.
+    const likeRim = !ofGap && edges === 'open' && piece.some((cell) => isOnRim(terrain, cell));
+    const drains = voids === 'all' || (ofGap ? gaps === 'open' : voids === 'rim' && likeRim);
+    const levelM = likeRim && voidLevelM === Number.NEGATIVE_INFINITY ? edgeLevelM : voidLevelM;
+    if (drains) for (const cell of piece) open.set(cell, levelM);
   }
   return open;
 }

@@ -57,7 +57,10 @@ it('a cut column parts every outline and leaves the cells as they were', () => {
       const ponds = pondsOf(found).filter(({ parent }) => nested || parent === -1);
       const kept = new Uint8Array(depressions.parent.length);
       for (const { node } of ponds) kept[node] = 1;
-      const outlines = pondOutlines(grid, survey, drainage, depressions, kept, { nested, cutColumn });
+      const outlines = pondOutlines(grid, survey, drainage, depressions, kept, {
+        nested,
+        columns: { source: Int32Array.from({ length: width }, (_, column) => column), cut: cutColumn },
+      });
       for (const { node, polygons } of outlines) {
         const cells = polygons.flatMap(({ outer, holes }) => {
           const columns = outer.map((vertex) => vertex % (width + 1));
