@@ -1,9 +1,10 @@
 import { type Neighbours, OverbrimError, type Survey, surveySteps } from '../core/index.ts';
 import type { JobContext } from '../host/index.ts';
-import type { TerrainRequest, TerrainStore } from '../processes/index.ts';
+import type { TerrainRequest, TerrainStore, TextFile } from '../processes/index.ts';
 import type { ByteSource } from '../raster/byte-source.ts';
 import { crsFromEpsg } from '../raster/crs.ts';
 import type { EpsgLookup } from '../raster/epsg.ts';
+import { sha256Hex } from '../raster/hash.ts';
 import { openTerrain } from '../raster/open-terrain.ts';
 import type { Crs, Terrain } from '../raster/terrain.ts';
 
@@ -38,22 +39,14 @@ export class TerrainShelf implements TerrainStore {
     if (held !== undefined) return held;
     context.progress(0, 'reading elevation');
     const sources = await this.#sources(references);
-    try {
-      const terrain = await openTerrain(sources, {
-        ...extract,
-        ...(this.#reach.epsg === undefined ? {} : { epsg: this.#reach.epsg }),
-        signal: context.signal,
-        progress: (done) => context.progress(readingShare * done, 'reading elevation'),
-      });
-      this.#terrains.set(key, terrain);
-      return terrain;
-    } catch (error) {
-      // What does not fit in a file is the file's fault, not that of the question.
-      if (error instanceof OverbrimError && error.code === 'bad-input') {
-        throw new OverbrimError('unreadable', error.message, { cause: error });
-      }
-      throw error;
-    }
+    const terrain = await openTerrain(sources, {
+      ...extract,
+      ...(this.#reach.epsg === undefined ? {} : { epsg: this.#reach.epsg }),
+      signal: context.signal,
+      progress: (done) => context.progress(readingShare * done, 'reading elevation'),
+    });
+    this.#terrains.set(key, terrain);
+    return terrain;
   }
 
   /** Opens all, or closes again what is open. */
@@ -103,7 +96,7 @@ export class TerrainShelf implements TerrainStore {
     return crsFromEpsg(code, this.#reach.epsg);
   }
 
-  async text(reference: string): Promise<string> {
+  async text(reference: string): Promise<TextFile> {
     const source = await this.#reach.source(reference);
     try {
       // A source of unknown size tells it with its first answer.
@@ -115,7 +108,8 @@ export class TerrainShelf implements TerrainStore {
           `${source.name} has ${size} bytes; expected a GeoJSON file of at most ${mostTextBytes}, so cut it to the terrain.`,
         );
       }
-      return new TextDecoder().decode(await source.read(0, size));
+      const bytes = await source.read(0, size);
+      return { name: source.name, text: new TextDecoder().decode(bytes), sha256: await sha256Hex(bytes) };
     } finally {
       await source.close?.();
     }

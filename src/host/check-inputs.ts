@@ -63,7 +63,7 @@ function checkedValue(name: string, input: InputDescription, value: Json): Json 
   if (!result.valid) {
     throw new OverbrimError(
       'bad-input',
-      `The input "${name}" is ${shown(value)}; expected ${expectation(input)}.`,
+      `The input "${name}" is ${shown(value)}; expected ${expectation(input, value)}.`,
     );
   }
   return value;
@@ -75,8 +75,10 @@ function shown(value: Json): string {
 }
 
 /** What a schema asks for, in words. */
-function expectation(input: InputDescription): string {
+function expectation(input: InputDescription, value: Json): string {
   const { schema } = input;
+  // A pattern is for machines; the title says the same in words.
+  if (schema.pattern !== undefined && typeof value === 'string') return input.title;
   if (schema.enum !== undefined) return `one of ${schema.enum.join(', ')}`;
   const range = [
     schema.minimum === undefined ? '' : ` of at least ${schema.minimum}`,

@@ -12,7 +12,10 @@ export interface Lineage {
   readonly process: { readonly id: string; readonly version: string };
   readonly software: Software;
   readonly inputs: Inputs;
-  /** What the process recorded: hash and place of the elevation, settings that it derived. */
+  /**
+   * What the process recorded: hash and place of the elevation, settings that it derived; under `textFiles` name and
+   * SHA-256 of each text file among the inputs, such as outlets, since a path does not tell what it held.
+   */
   readonly facts: Readonly<Record<string, Json>>;
   readonly notes: readonly string[];
   /** ISO 8601, UTC. */

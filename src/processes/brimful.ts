@@ -14,6 +14,7 @@ import {
 } from '../core/index.ts';
 import type { JobContext } from '../host/index.ts';
 import type { Terrain } from '../raster/terrain.ts';
+import { counted } from './counted.ts';
 import {
   addOutlet,
   addOutletFeatures,
@@ -23,8 +24,8 @@ import {
 } from './outlet-cells.ts';
 import type { TerrainInputs } from './terrain-inputs.ts';
 import { terrainRequest } from './terrain-request.ts';
-import type { TerrainStore } from './terrain-store.ts';
-import { isTypedPlace, typedCell } from './typed-place.ts';
+import type { TerrainStore, TextFile } from './terrain-store.ts';
+import { isTypedPlace, namedCrs, typedCell } from './typed-place.ts';
 
 /** A terrain with every depression filled to its brim. */
 export interface Brimful {
@@ -45,8 +46,11 @@ export async function brimful(
   context: JobContext,
   store: TerrainStore,
 ): Promise<Brimful> {
+  // A misspelt CRS should be told even where no place is typed.
+  if (inputs.crs !== undefined) await namedCrs(inputs.crs, store);
   const terrain = await terrainOf(inputs, context, store);
   recordTerrain(terrain, context);
+  const files = await outletFiles(inputs, context, store);
   const { edges, neighbours, voids, gaps, outlets, crs, edgeLevel, voidLevel, outletLevel } = inputs;
   const key = JSON.stringify({
     edges,
@@ -58,8 +62,10 @@ export async function brimful(
     edgeLevel,
     voidLevel,
     outletLevel,
+    // A file may hold something else when it is asked about again.
+    contents: Array.from(files.values(), ({ sha256 }) => sha256),
   });
-  const analysis = await store.kept(terrain, key, () => filledToBrim(terrain, inputs, context, store));
+  const analysis = await store.kept(terrain, key, () => filledToBrim(terrain, inputs, files, context, store));
   noteLandlocked(analysis.survey, analysis.drainage, context);
   return analysis;
 }
@@ -67,11 +73,12 @@ export async function brimful(
 async function filledToBrim(
   terrain: Terrain,
   inputs: TerrainInputs,
+  files: ReadonlyMap<string, TextFile>,
   context: JobContext,
   store: TerrainStore,
 ): Promise<Brimful> {
   const { grid } = terrain;
-  const rules = await outletRules(inputs, terrain, store);
+  const rules = await outletRules(inputs, terrain, files, store);
   const survey = await store.survey(terrain, inputs.neighbours, outletPits(grid, rules.cells), context);
   await context.breathe();
   const outlets = outletSills(grid, survey, rules);
@@ -101,18 +108,18 @@ export function terrainOf(inputs: TerrainInputs, context: JobContext, store: Ter
 async function outletRules(
   inputs: TerrainInputs,
   terrain: Terrain,
+  files: ReadonlyMap<string, TextFile>,
   store: TerrainStore,
 ): Promise<OutletRules> {
   const levels: OutletLevels = new Map();
   const levelM = inputs.outletLevel ?? Number.NEGATIVE_INFINITY;
   let voids: OutletRules['voids'] = inputs.voids;
   for (const outlet of inputs.outlets ?? []) {
-    if (outlet === 'voids') voids = 'all';
+    const file = files.get(outlet);
+    if (file !== undefined) addOutletFeatures(levels, terrain, outlet, file.text, levelM);
+    else if (outlet === 'voids') voids = 'all';
     else if (outlet === 'deepest') addOutlet(levels, [deepestCell(terrain.grid)], levelM);
-    else if (isTypedPlace(outlet)) {
-      const cell = await typedCell(terrain, 'outlets', outlet, inputs.crs, store);
-      addOutlet(levels, [cell], levelM);
-    } else addOutletFeatures(levels, terrain, outlet, await outletText(outlet, store), levelM);
+    else addOutlet(levels, [await typedCell(terrain, 'outlets', outlet, inputs.crs, store)], levelM);
   }
   return {
     edges: inputs.edges,
@@ -124,8 +131,26 @@ async function outletRules(
   };
 }
 
-/** The text of a file of outlets; what is no file is none of the other ways to name one either. */
-async function outletText(outlet: string, store: TerrainStore): Promise<string> {
+/** The files among the outlets by the path or URL that was given; recorded, since a path alone tells not what they held. */
+async function outletFiles(
+  { outlets = [] }: TerrainInputs,
+  context: JobContext,
+  store: TerrainStore,
+): Promise<ReadonlyMap<string, TextFile>> {
+  const files = new Map<string, TextFile>();
+  for (const outlet of outlets) {
+    if (outlet === 'voids' || outlet === 'deepest' || isTypedPlace(outlet)) continue;
+    files.set(outlet, await outletFile(outlet, store));
+  }
+  if (files.size > 0) {
+    const identities = Array.from(files.values(), ({ name, sha256 }) => ({ input: 'outlets', name, sha256 }));
+    context.record('textFiles', identities);
+  }
+  return files;
+}
+
+/** A file of outlets; what is no file is none of the other ways to name one either. */
+async function outletFile(outlet: string, store: TerrainStore): Promise<TextFile> {
   try {
     return await store.text(outlet);
   } catch (cause) {
@@ -165,7 +190,7 @@ function noteLandlocked(survey: Survey, drainage: Drainage, context: JobContext)
   });
   if (cells > 0) {
     context.note(
-      `${cells} cells in ${leaves} catchments have no way to any outlet, since voids or closed edges enclose them; they get no brim level and no pond.`,
+      `${counted(cells, 'cell')} in ${counted(leaves, 'catchment')} ${cells === 1 ? 'has' : 'have'} no way to any outlet, since voids or closed edges enclose ${cells === 1 ? 'it; it gets' : 'them; they get'} no brim level and no pond.`,
     );
   }
 }

@@ -5,4 +5,4 @@ export { pondNames } from './pond-names.ts';
 export { spillPath } from './spill-path.ts';
 export { type TerrainInputs, terrainInputs } from './terrain-inputs.ts';
 export type { TerrainRequest } from './terrain-request.ts';
-export type { TerrainStore } from './terrain-store.ts';
+export type { TerrainStore, TextFile } from './terrain-store.ts';

@@ -90,10 +90,10 @@ function featuresOf(name: string, text: string): Feature[] {
 function levelOf(what: string, feature: Feature, usualLevelM: number): number {
   const level: unknown = feature?.properties?.levelM;
   if (level === undefined || level === null) return usualLevelM;
-  if (typeof level !== 'number' || !Number.isFinite(level)) {
+  if (typeof level !== 'number' || !Number.isFinite(Math.fround(level))) {
     throw new OverbrimError(
       'bad-input',
-      `${what} has the level ${JSON.stringify(level)}; expected a number of metres as "levelM", or none.`,
+      `${what} has the level ${JSON.stringify(level)}; expected a number of metres from -3.4e38 to 3.4e38 as "levelM", or none.`,
     );
   }
   return level;

@@ -1,5 +1,11 @@
 import type { Feature, Position } from 'geojson';
-import { spillPath as coreSpillPath, distanceM, type SpillLeg, type SpillPath } from '../core/index.ts';
+import {
+  spillPath as coreSpillPath,
+  distanceM,
+  type Grid,
+  type SpillLeg,
+  type SpillPath,
+} from '../core/index.ts';
 import { defineProcess, type Json } from '../host/index.ts';
 import { cellCentre } from '../raster/place.ts';
 import { type Brimful, brimful, terrainOf } from './brimful.ts';
@@ -53,7 +59,9 @@ export const spillPath = defineProcess({
     const { grid, survey, drainage, depressions } = analysis;
     context.progress(0.9, 'tracing the path');
     await context.breathe();
-    const path = coreSpillPath(grid, survey, drainage, depressions, start);
+    const found = coreSpillPath(grid, survey, drainage, depressions, start);
+    const path = found.legs.length > 0 ? found : { ...found, legs: [standing(grid, start)] };
+    if (path !== found) context.note('The path starts on an outlet, so water leaves there at once.');
     if (path.end === 'no-way') {
       context.note(
         'The path ends in a pit from which no way leads to any outlet, since voids or closed edges enclose it.',
@@ -65,6 +73,19 @@ export const spillPath = defineProcess({
     };
   },
 });
+
+/** The leg of water that leaves where it falls: one cell, so that the result tells where and how high that is. */
+function standing(grid: Grid, cell: number): SpillLeg {
+  const elevationM = grid.elevationM[cell];
+  return {
+    kind: 'land',
+    cells: [cell],
+    pond: -1,
+    fromElevationM: elevationM,
+    toElevationM: elevationM,
+    lengthM: 0,
+  };
+}
 
 function* legFeatures(analysis: Brimful, path: SpillPath): Generator<Feature> {
   const { survey, drainage, depressions, measures, terrain } = analysis;

@@ -3,6 +3,14 @@ import type { JobContext } from '../host/index.ts';
 import type { Crs, Terrain } from '../raster/terrain.ts';
 import type { TerrainRequest } from './terrain-request.ts';
 
+/** A text file as it was read. */
+export interface TextFile {
+  readonly name: string;
+  readonly text: string;
+  /** Of its bytes, in hex. */
+  readonly sha256: string;
+}
+
 /**
  * What the built-in processes borrow from the place where they run: terrains and their surveys, kept under handles
  * so that no file is read and no terrain surveyed twice.
@@ -22,5 +30,5 @@ export interface TerrainStore {
   /** A CRS by its EPSG code. */
   crs(code: number): Promise<Crs>;
   /** A small text file behind a reference, such as outlets as GeoJSON. */
-  text(reference: string): Promise<string>;
+  text(reference: string): Promise<TextFile>;
 }

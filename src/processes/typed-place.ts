@@ -1,6 +1,6 @@
 import { OverbrimError } from '../core/index.ts';
 import { cellAtPoint } from '../raster/place.ts';
-import type { Terrain } from '../raster/terrain.ts';
+import type { Crs, Terrain } from '../raster/terrain.ts';
 import { type Point, transformer } from '../raster/transform.ts';
 import type { TerrainStore } from './terrain-store.ts';
 
@@ -32,7 +32,7 @@ export async function typedCell(
   }
   const typed: Point = [Number(match[1]), Number(match[2])];
   const { crs: own } = terrain.georeference;
-  const named = crs === undefined ? own : await store.crs(Number(crs.slice('EPSG:'.length)));
+  const named = crs === undefined ? own : await namedCrs(crs, store);
   const point = crs === undefined ? typed : transformer(named, own)(...typed);
   const cell = cellAtPoint(terrain, point);
   if (cell < 0) {
@@ -48,6 +48,23 @@ export async function typedCell(
     );
   }
   return cell;
+}
+
+/**
+ * The CRS of typed coordinates.
+ * @throws OverbrimError `bad-input` when it is not one that coordinates can be converted from.
+ */
+export async function namedCrs(crs: string, store: Pick<TerrainStore, 'crs'>): Promise<Crs> {
+  try {
+    return await store.crs(Number(crs.slice('EPSG:'.length)));
+  } catch (cause) {
+    if (!(cause instanceof OverbrimError) || cause.code !== 'unsupported') throw cause;
+    throw new OverbrimError(
+      'bad-input',
+      `The input "crs" is "${crs}", which is no projected or geographic CRS of the EPSG register that can be used; give another code with --crs, or none for coordinates in the CRS of the terrain.`,
+      { cause },
+    );
+  }
 }
 
 function extentText({ grid, georeference }: Terrain): string {

@@ -19,10 +19,10 @@ describe('checkedInputs', () => {
   });
 
   it.each<[Record<string, Json>, string]>([
-    [{ deep: 1 }, 'The process sample has no input "deep"; it takes places, depth, side, count, wet.'],
+    [{ deep: 1 }, 'The process sample has no input "deep"; it takes places, depth, side, count, wet, code.'],
     [
       { constructor: 1 },
-      'The process sample has no input "constructor"; it takes places, depth, side, count, wet.',
+      'The process sample has no input "constructor"; it takes places, depth, side, count, wet, code.',
     ],
     [
       { depth: -1 },
@@ -39,6 +39,8 @@ describe('checkedInputs', () => {
     [{ places: [] }, 'The input "places" has 0 values; expected 1 to 3.'],
     [{ places: ['a', 'b', 'c', 'd'] }, 'The input "places" has 4 values; expected 1 to 3.'],
     [{ places: ['a', 2] }, 'The input "places" is 2; expected a string: some places.'],
+    [{ code: '4326' }, 'The input "code" is "4326"; expected a code, as EPSG:code.'],
+    [{ code: 4326 }, 'The input "code" is 4326; expected a string: a code, as EPSG:code.'],
   ])('refuses %j', (inputs, message) => {
     expect(() => checked(inputs)).toThrow(new OverbrimError('bad-input', message));
   });

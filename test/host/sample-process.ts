@@ -28,6 +28,12 @@ export const sampleDescription: ProcessDescription = {
     },
     count: { title: 'how many', description: '', schema: { type: 'integer' }, minOccurs: 0 },
     wet: { title: 'whether wet', description: '', schema: { type: 'boolean' }, minOccurs: 0 },
+    code: {
+      title: 'a code, as EPSG:code',
+      description: '',
+      schema: { type: 'string', pattern: '^EPSG:[0-9]+$' },
+      minOccurs: 0,
+    },
   },
   outputs: { answer: { title: 'Answer', description: '', schema: { type: 'object' } } },
 };

@@ -56,6 +56,6 @@ describe('a part of the terrain', () => {
   });
 
   it('is refused when a budget asks for an overview that the file has not', async () => {
-    await expect(pondsOf(bowl, { inputs: { cellBudget: 4 } })).rejects.toMatchObject({ code: 'too-large' });
+    await expect(pondsOf(bowl, { inputs: { cellBudget: 4 } })).rejects.toMatchObject({ code: 'bad-input' });
   });
 });

@@ -77,7 +77,7 @@ describe('outlets from GeoJSON', () => {
       { pitElevationM: 10, heldByOutlet: false },
     ]);
     expect(notes).toContain(
-      '1 outermost ponds stand at the level of water outside an outlet (heldByOutlet); their capacity is no storage of the ground.',
+      '1 outermost pond stands at the level of water outside an outlet (heldByOutlet); its capacity is no storage of the ground.',
     );
   });
 
@@ -205,7 +205,12 @@ describe('outlets are refused', () => {
     [
       'when a level is no number',
       feature(pitOfA, { levelM: '17.5' }),
-      'Feature 1 of reach.geojson has the level "17.5"; expected a number of metres as "levelM", or none.',
+      'Feature 1 of reach.geojson has the level "17.5"; expected a number of metres from -3.4e38 to 3.4e38 as "levelM", or none.',
+    ],
+    [
+      'when a level became infinite as float32',
+      feature(pitOfA, { levelM: 1e39 }),
+      'Feature 1 of reach.geojson has the level 1e+39; expected a number of metres from -3.4e38 to 3.4e38 as "levelM", or none.',
     ],
   ])('%s', async (_, document, message) => {
     await expect(withOutlets(document)).rejects.toThrow(message);

@@ -127,7 +127,21 @@ describe('spill path', () => {
       'The path ends in a pit from which no way leads to any outlet, since voids or closed edges enclose it.',
     );
     expect(notes).toContain(
-      '9 cells in 1 catchments have no way to any outlet, since voids or closed edges enclose them; they get no brim level and no pond.',
+      '9 cells in 1 catchment have no way to any outlet, since voids or closed edges enclose them; they get no brim level and no pond.',
+    );
+  });
+
+  it('spoke of 1 cells in 1 catchments that have no way: it minds the number', async () => {
+    const hole = [
+      [5, 5, 5, 5, 5],
+      [5, Number.NaN, Number.NaN, Number.NaN, 5],
+      [5, Number.NaN, 3, Number.NaN, 5],
+      [5, Number.NaN, Number.NaN, Number.NaN, 5],
+      [5, 5, 5, 5, 5],
+    ];
+    const { notes } = await pathOf(hole, '500025,975');
+    expect(notes).toContain(
+      '1 cell in 1 catchment has no way to any outlet, since voids or closed edges enclose it; it gets no brim level and no pond.',
     );
   });
 
@@ -161,6 +175,40 @@ describe('spill path', () => {
     // Source: geographiclib, geodesic on WGS 84; along a parallel half a degree from the equator it is all but straight.
     const { s12 = 0 } = Geodesic.WGS84.Inverse(0.5, 178.5, 0.5, -175.5);
     expect(Number(properties[0]?.lengthM) / s12).toBeCloseTo(1, 5);
+  });
+
+  it('was empty from an outlet cell: it is one leg of one place and one station', async () => {
+    const { legs, properties, section, notes } = await pathOf(twoPonds, '500095,985');
+    const [{ geometry }] = legs;
+    expect(geometry.type).toBe('LineString');
+    const [start, end] = geometry.type === 'LineString' ? geometry.coordinates : [];
+    expect(start).toEqual(end);
+    expect(properties).toEqual([
+      {
+        leg: 1,
+        kind: 'land',
+        pond: null,
+        lengthM: 0,
+        dropM: 0,
+        slope: 0,
+        fromElevationM: 5,
+        toElevationM: 5,
+        storageM3: 0,
+        endsAt: 'outlet',
+      },
+    ]);
+    expect(section).toMatchObject({ lengthM: 0, endsAt: 'outlet', sills: [] });
+    expect(section.stations).toEqual([
+      { leg: 1, kind: 'land', distanceM: 0, x: 500_095, y: 985, groundM: 5, waterM: 5 },
+    ]);
+    expect(notes).toEqual(['The path starts on an outlet, so water leaves there at once.']);
+  });
+
+  it('was empty from an outlet whose water lies above the ground too: it tells that level', async () => {
+    const { properties, section } = await pathOf(twoPonds, '500095,985', { inputs: { edgeLevel: 7 } });
+    expect(properties).toHaveLength(1);
+    expect(properties[0]).toMatchObject({ fromElevationM: 7, toElevationM: 7, endsAt: 'outlet' });
+    expect(section.stations).toMatchObject([{ groundM: 5, waterM: 7 }]);
   });
 
   it('follows a flat as land', async () => {
