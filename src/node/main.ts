@@ -4,13 +4,11 @@ import { builtInProcesses, TerrainShelf } from '../engine/index.ts';
 import { type Process, software } from '../host/index.ts';
 import { caution, type TerrainStore } from '../processes/index.ts';
 import { descriptionText } from './description-text.ts';
+import { exitCodes } from './exit-codes.ts';
 import { addProcessOptions, type GivenOptions, inputsOf, shielded } from './process-options.ts';
 import { reachFiles } from './reach-files.ts';
 import { type RunReport, runProcess } from './run-process.ts';
 import type { Terminal } from './terminal.ts';
-
-/** Exit codes of the command line. */
-export const exitCodes = { done: 0, failed: 1, wrongUse: 2, interrupted: 130 } as const;
 
 /** Errors that the person at the keyboard mends by other options. */
 const wrongUse = new Set(['bad-input', 'unit-missing', 'no-outlet']);
@@ -119,7 +117,11 @@ function sizeText(bytes: number): string {
 function explain(error: unknown, asJson: boolean, terminal: Terminal): number {
   if (error instanceof CommanderError) {
     if (error.exitCode === 0 || error.code === 'commander.help') return exitCodes.done;
-    const message = `${error.message.replace(/^error: /, '').replace('\n(Did', ' (did')}; see overbrim --help or overbrim run <process> --help.`;
+    const found = error.message
+      .replace(/^error: /, '')
+      .replace('\n(Did', ' (did')
+      .replace('. Expected', '; expected');
+    const message = `${found.replace(/\.$/, '')}; see overbrim --help or overbrim run <process> --help.`;
     return say('bad-input', message, exitCodes.wrongUse);
   }
   if (error instanceof OverbrimError) {

@@ -36,9 +36,17 @@ export class ResultFolder {
   #begun = false;
 
   /**
-   * @throws OverbrimError `bad-input` when the path is a file, or a folder that holds the result of another process.
+   * `files` are the names of those that are going to be written.
+   * @throws OverbrimError `bad-input` when the path is empty or a file, or a folder that holds the result of another
+   * process or, without any result, a file of one of those names.
    */
-  constructor(path: string, processId: string) {
+  constructor(path: string, processId: string, files: readonly string[]) {
+    if (path.trim() === '') {
+      throw new OverbrimError(
+        'bad-input',
+        `The folder for the results is "${path}"; give its path with --out, such as --out . for the current folder.`,
+      );
+    }
     this.path = resolve(path);
     const exists = existsSync(this.path);
     const around = exists ? this.path : dirname(this.path);
@@ -52,6 +60,13 @@ export class ResultFolder {
       throw new OverbrimError(
         'bad-input',
         `The folder ${path} holds results of ${other}; choose another folder for ${processId} with --out.`,
+      );
+    }
+    const foreign = files.find((file) => existsSync(join(this.path, file)));
+    if (other === null && foreign !== undefined) {
+      throw new OverbrimError(
+        'bad-input',
+        `The folder ${path} holds a file ${foreign} that is no result of ${processId}, since there is no ${resultFile} beside it; move it away or choose another folder with --out.`,
       );
     }
   }

@@ -1,6 +1,13 @@
 import { OverbrimError } from '../core/index.ts';
 import type { TerrainShelf } from '../engine/index.ts';
-import { Job, type Json, mediaTypeOf, type Process, software } from '../host/index.ts';
+import {
+  Job,
+  type Json,
+  mediaTypeOf,
+  type OutputDescription,
+  type Process,
+  software,
+} from '../host/index.ts';
 import { caution, type TerrainStore } from '../processes/index.ts';
 import { progressDisplay, silent } from './progress.ts';
 import { ResultFolder, resultFile, type WrittenFile } from './result-folder.ts';
@@ -34,7 +41,8 @@ export async function runProcess(
   options: { quiet: boolean },
 ): Promise<RunReport> {
   const { description } = process;
-  const folder = new ResultFolder(out, description.id);
+  const fileNames = Object.entries(description.outputs).map(([id, output]) => fileName(id, output));
+  const folder = new ResultFolder(out, description.id, fileNames);
   const display = options.quiet ? silent : progressDisplay(terminal);
   let interrupted = 0;
   let job: Job<TerrainStore> | undefined;
@@ -63,8 +71,7 @@ export async function runProcess(
     const values: Record<string, Json> = {};
     for (const [id, output] of Object.entries(description.outputs)) {
       const mediaType = mediaTypeOf(output);
-      const file = `${id}.${extensions[mediaType.split(';')[0]] ?? 'bin'}`;
-      files.push({ output: id, mediaType, ...(await folder.write(file, outputs[id], stop)) });
+      files.push({ output: id, mediaType, ...(await folder.write(fileName(id, output), outputs[id], stop)) });
       const body = outputs[id];
       if ('json' in body) values[id] = body.json;
       await new Promise((resolve) => setImmediate(resolve));
@@ -82,4 +89,8 @@ export async function runProcess(
     terminal.off('SIGINT', interrupt);
     terminal.off('SIGTERM', interrupt);
   }
+}
+
+function fileName(id: string, output: OutputDescription): string {
+  return `${id}.${extensions[mediaTypeOf(output).split(';')[0]] ?? 'bin'}`;
 }

@@ -16,6 +16,8 @@ const truncated = work.put('truncated.tif', readFileSync(two).subarray(0, 300));
 const notJson = work.put('broken.geojson', '{"type": "Feature",');
 const far = work.put('far.geojson', '{"type":"Point","coordinates":[10,10]}');
 await overbrim('run', 'depressions', '--terrain', two, '--out', work.at('held'));
+work.folder('theirs');
+work.put('theirs/ponds.geojson', '{}');
 const before = work.list();
 
 /** A failure leaves nothing: no folder of results, no hidden one, and what stood there stays. */
@@ -53,7 +55,7 @@ describe('wrong use exits with 2 and says', () => {
     [
       'something more',
       [...ponds, '--nested', 'yes'],
-      /^too many arguments for 'depressions'\. Expected 0 arguments but got 1/,
+      `too many arguments for 'depressions'; expected 0 arguments but got 1; ${help}`,
     ],
     [
       'no terrain',
@@ -119,7 +121,52 @@ describe('wrong use exits with 2 and says', () => {
     [
       'a CRS without register',
       [...path, '--from', '3,0', '--crs', '4326'],
-      'The input "crs" is "4326"; expected a string: CRS of typed coordinates, as EPSG:code.',
+      'The input "crs" is "4326"; expected CRS of typed coordinates, as EPSG:code.',
+    ],
+    ...[[...path, '--from', '3,0'], ponds].map((args): [string, string[], string] => [
+      'a CRS that is not known, whether a place uses it or not',
+      [...args, '--crs', 'EPSG:99999'],
+      'The input "crs" is "EPSG:99999", which is no projected or geographic CRS of the EPSG register that can be used; give another code with --crs, or none for coordinates in the CRS of the terrain.',
+    ]),
+    [
+      'an empty path of a terrain',
+      ['run', 'depressions', '--terrain', '', ...out],
+      'The input "terrain" is ""; expected elevation file, or several as one mosaic.',
+    ],
+    [
+      'an empty path of outlets',
+      [...ponds, '--outlets', ''],
+      'The input "outlets" is ""; expected further outlets: GeoJSON file, x,y, voids or deepest.',
+    ],
+    [
+      'a level that float32 cannot hold',
+      [...ponds, '--edge-level', '1e39'],
+      'The input "edgeLevel" is 1e+39; expected a number of at least -3.4e+38 and at most 3.4e+38: level of the water beyond the edge, metres.',
+    ],
+    [
+      'an empty folder, which was the current one',
+      ['run', 'depressions', '--terrain', two, '--out', ''],
+      'The folder for the results is ""; give its path with --out, such as --out . for the current folder.',
+    ],
+    [
+      "a folder with the caller's own ponds.geojson",
+      [...ponds.slice(0, -1), work.at('theirs')],
+      /theirs holds a file ponds\.geojson that is no result of depressions, .*; move it away or choose another folder with --out\.$/,
+    ],
+    [
+      'a unit that the file contradicts',
+      [...ponds, '--vertical-unit', 'ft'],
+      'two.tif says that its elevations are in metres, but --vertical-unit ft was given; leave the option out or mend the file.',
+    ],
+    [
+      'an extent outside',
+      [...ponds, '--extent', '0,0,1,1'],
+      /^The extent \(--extent\) lies outside the terrain; expected /,
+    ],
+    [
+      'a budget that no overview meets',
+      [...ponds, '--cell-budget', '1'],
+      /the budget is 1, so raise it \(--cell-budget\), give a smaller extent/,
     ],
     [
       'no unit',
@@ -205,11 +252,6 @@ describe('failure exits with 1 and says', () => {
       'that two files do not fit',
       terrain(two, other),
       'other.tif is in WGS 84 / UTM zone 32N; expected WGS 84 / UTM zone 31N as in two.tif, so warp it to the same grid first.',
-    ],
-    [
-      'that a CRS is not known',
-      [...path, '--from', '3,0', '--crs', 'EPSG:9999'],
-      /^EPSG:9999 is not in the register of coordinate reference systems/,
     ],
     [
       'that the folder lies in a file',

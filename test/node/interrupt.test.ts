@@ -1,11 +1,10 @@
 import { type ChildProcess, spawn } from 'node:child_process';
-import { existsSync, mkdtempSync, readdirSync, readFileSync, rmSync } from 'node:fs';
-import { join, resolve } from 'node:path';
-import { build } from 'vite';
-import { afterAll, describe, expect, it } from 'vitest';
+import { existsSync, readdirSync, readFileSync } from 'node:fs';
+import { describe, expect, it } from 'vitest';
 import { main } from '../../src/node/index.ts';
 import { samplesFile } from '../processes/made-terrain.ts';
 import { twoPonds } from '../processes/small-terrains.ts';
+import { bundledBin } from './bundled-bin.ts';
 import { FakeTerminal, overbrim } from './fake-terminal.ts';
 import { WorkFolder } from './work-folder.ts';
 
@@ -20,23 +19,10 @@ const rough = Float32Array.from({ length: side * side }, () => {
 });
 const large = work.put('large.tif', await samplesFile(side, side, rough));
 
-/** The command line as one file beside the packages that it imports. */
-const bundle = mkdtempSync(resolve('node_modules', '.overbrim-'));
-afterAll(() => rmSync(bundle, { recursive: true, force: true }));
-await build({
-  configFile: false,
-  logLevel: 'silent',
-  build: {
-    ssr: resolve('src/node/bin.ts'),
-    outDir: bundle,
-    emptyOutDir: false,
-    target: 'node20',
-    rolldownOptions: { output: { entryFileNames: 'bin.mjs' } },
-  },
-});
+const bin = await bundledBin();
 
 function start(...args: string[]): ChildProcess {
-  return spawn(process.execPath, [join(bundle, 'bin.mjs'), ...args], { stdio: ['ignore', 'ignore', 'pipe'] });
+  return spawn(process.execPath, [bin, ...args], { stdio: ['ignore', 'ignore', 'pipe'] });
 }
 
 /** Interrupts a run as soon as `when` says so, and waits for its end. */

@@ -9,7 +9,7 @@ const never = () => {};
 const result = { json: { process: { id: 'sample' } } };
 
 async function filled(name: string, file: string, content: string): Promise<ResultFolder> {
-  const folder = new ResultFolder(work.at(name), 'sample');
+  const folder = new ResultFolder(work.at(name), 'sample', ['a.txt']);
   folder.begin();
   await folder.write(file, { text: [content] }, never);
   await folder.write(resultFile, result, never);
@@ -25,7 +25,7 @@ describe('ResultFolder', () => {
   });
 
   it('hashes what it writes, whatever form it comes in', async () => {
-    const folder = new ResultFolder(work.at('forms'), 'sample');
+    const folder = new ResultFolder(work.at('forms'), 'sample', ['a.txt']);
     folder.begin();
     // SHA-256 of "abc": FIPS 180-2, appendix B.1 (value from memory).
     const sha256 = 'ba7816bf8f01cfea414140de5dae2223b00361a396177a9cb410ff61f20015ad';
@@ -66,7 +66,7 @@ describe('ResultFolder', () => {
   });
 
   it('stops between two pieces when told to', async () => {
-    const folder = new ResultFolder(work.at('stopped'), 'sample');
+    const folder = new ResultFolder(work.at('stopped'), 'sample', ['a.txt']);
     folder.begin();
     let pieces = 0;
     function* text(): Generator<string> {
@@ -91,12 +91,33 @@ describe('ResultFolder', () => {
   ])('refuses a folder whose result.json is %s', (content, message) => {
     work.folder('taken');
     work.put('taken/result.json', content);
-    expect(() => new ResultFolder(work.at('taken'), 'sample')).toThrow(message);
+    expect(() => new ResultFolder(work.at('taken'), 'sample', ['a.txt'])).toThrow(message);
+  });
+
+  it('overwrote a file of the same name that is no result of ours: it refuses the folder', () => {
+    work.folder('theirs');
+    work.put('theirs/a.txt', 'by the analyst');
+    expect(() => new ResultFolder(work.at('theirs'), 'sample', ['b.txt', 'a.txt'])).toThrow(
+      new OverbrimError(
+        'bad-input',
+        `The folder ${work.at('theirs')} holds a file a.txt that is no result of sample, since there is no result.json beside it; move it away or choose another folder with --out.`,
+      ),
+    );
+    expect(() => new ResultFolder(work.at('theirs'), 'sample', ['b.txt'])).not.toThrow();
+  });
+
+  it.each(['', ' '])('wrote into the current folder when the path was "%s": it refuses that', (path) => {
+    expect(() => new ResultFolder(path, 'sample', [])).toThrow(
+      new OverbrimError(
+        'bad-input',
+        `The folder for the results is "${path}"; give its path with --out, such as --out . for the current folder.`,
+      ),
+    );
   });
 
   it('says where it cannot write', () => {
     const file = work.put('file.txt', '');
-    const folder = new ResultFolder(`${file}/out`, 'sample');
+    const folder = new ResultFolder(`${file}/out`, 'sample', ['a.txt']);
     expect(() => folder.begin()).toThrow(
       /file\.txt\/out could not be written \(.+\); check the folder, its permissions and the space on the disk\.$/,
     );
