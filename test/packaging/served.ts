@@ -26,13 +26,13 @@ export interface Serving {
   readonly open?: boolean;
 }
 
-/** Serves a page at `/`, and `/dist/`, `/node_modules/` and `/test/data/` of the repository. */
+/** Serves a page at `/`, and `/dist/`, `/node_modules/`, `/test/data/` and `/demo/town/` of the repository. */
 export async function served({ head, policy, open = false }: Serving): Promise<Served> {
   const page = `<!doctype html><html lang="en"><head><meta charset="utf-8"><title>page</title>${head}</head><body></body></html>`;
   const server = createServer((request, response) => {
     const { pathname } = new URL(request.url ?? '/', 'http://localhost');
     const path = join(root, pathname);
-    const isFile = /^\/(dist|node_modules|test\/data)\//.test(pathname) && existsSync(path);
+    const isFile = /^\/(dist|node_modules|test\/data|demo\/town)\//.test(pathname) && existsSync(path);
     const found = pathname === '/' || isFile;
     response.writeHead(found ? 200 : 404, {
       'content-type': pathname === '/' ? 'text/html' : (types[extname(path)] ?? 'text/plain'),
