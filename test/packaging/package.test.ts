@@ -17,6 +17,7 @@ describe('what is shipped', () => {
     const others = user.files.filter((file) => !/^dist\/.+\.(js|js\.map|d\.ts)$/.test(file));
     expect(others.sort()).toEqual([
       'CHANGELOG.md',
+      'DEVELOPERS.md',
       'LICENSE',
       'README.md',
       'dist/custom-elements.json',
@@ -26,6 +27,7 @@ describe('what is shipped', () => {
       'package.json',
       'src/processes/depressions.md',
       'src/processes/spill-path.md',
+      'styles/tokens.css',
     ]);
   });
 
