@@ -9,12 +9,15 @@ const noData = Number.NaN;
 
 /** The brim level of each cell on the grid and CRS of the input, a dropped last column put back. */
 export function brimLevelRaster({ terrain, grid, survey, drainage }: Brimful): RasterOut {
-  const { geoKeys } = terrain.georeference;
+  const { georeference, verticalUnit, fromDepths } = terrain;
   const levels = brimLevels(grid, survey, drainage);
   return {
     ...restored(terrain, levels),
     noData,
-    georeference: { ...terrain.georeference, geoKeys: keysInMetres(geoKeys, terrain.verticalUnit) },
+    georeference: {
+      ...georeference,
+      geoKeys: keysInMetres(georeference.geoKeys, verticalUnit, fromDepths),
+    },
     metadata: {
       description: 'Brim level: elevation to which water fills the terrain before it overflows to an outlet',
       unit: 'm',

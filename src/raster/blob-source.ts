@@ -18,7 +18,7 @@ export function blobSource(
       } catch (cause) {
         throw new OverbrimError(
           'unreadable',
-          `${name} can no longer be read by this page; it was moved or changed, so choose it again.`,
+          `${name} can no longer be read; it was moved or changed, so choose it again.`,
           { cause },
         );
       }

@@ -12,6 +12,7 @@ import { RangeReader } from './range-reader.ts';
 import { numberOf, tags } from './tag-values.ts';
 import type { Crs, VerticalUnit } from './terrain.ts';
 import { type Vertical, verticalOf } from './vertical.ts';
+import { scaledMeaning, verticalScaleOf } from './vertical-scale.ts';
 
 /** One elevation file, understood but with no cell read yet. */
 export interface ElevationFile {
@@ -25,6 +26,8 @@ export interface ElevationFile {
   /** Of the full resolution. */
   readonly placement: Placement;
   readonly vertical: Vertical;
+  /** What the georeference says of heights beyond their being stored as they are; null mostly. */
+  readonly verticalRemark: string | null;
 }
 
 export interface FileOptions {
@@ -51,15 +54,18 @@ export async function elevationFile(source: ByteSource, options: FileOptions): P
   }
   const crs = await crsFromKeys(geoKeys, reader.name, options.epsg);
   if (crs.kind === 'geographic') checkLatitudes(placement, layout.height, reader.name);
+  const verticalScale = await verticalScaleOf(tiff, full, geoKeys);
+  const stored = await valueMeaning(tiff, full, layout.sampleType);
   return {
     reader,
     levels: [layout, ...(await smallerLevels(tiff, overviews, layout))],
-    meaning: await valueMeaning(tiff, full, layout.sampleType),
+    meaning: scaledMeaning(stored, verticalScale, reader.name),
     crs,
     geoKeys,
     pixelIsPoint,
     placement,
     vertical: await verticalOf(geoKeys, reader.name, options.verticalUnit, options.epsg),
+    verticalRemark: verticalScale.remark,
   };
 }
 

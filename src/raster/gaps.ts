@@ -8,7 +8,7 @@ export interface Gap extends CellRect {
   readonly between: readonly [string, string];
 }
 
-/** The strips of 1 to 3 cells between tiles that no tile covers, corners where gaps cross included. */
+/** The strips of 1 to 3 cells between tiles that no tile covers, corners where gaps cross included once. */
 export function gapsBetween(parts: readonly Part[]): Gap[] {
   const gaps: Gap[] = [];
   for (let i = 0; i < parts.length; i++) {
@@ -19,7 +19,10 @@ export function gapsBetween(parts: readonly Part[]): Gap[] {
       if ((columns.gap && columns.size > widestGap) || (rows.gap && rows.size > widestGap)) continue;
       const rect = { column: columns.at, width: columns.size, row: rows.at, height: rows.size };
       const names = [parts[i].file.reader.name, parts[j].file.reader.name] as const;
-      for (const bare of uncovered(rect, parts)) gaps.push({ ...bare, between: names });
+      // Where gaps cross, several pairs of tiles see the corner: it is told with the first.
+      let bare: CellRect[] = [rect];
+      for (const taken of [...parts, ...gaps]) bare = bare.flatMap((left) => outside(left, taken));
+      for (const strip of bare) gaps.push({ ...strip, between: names });
     }
   }
   return gaps;
@@ -39,19 +42,18 @@ function between(
     : { at: end, size: start - end, gap: true };
 }
 
-/** Runs of rows of a rectangle in which no tile covers any cell. */
-function uncovered(rect: CellRect, parts: readonly Part[]): CellRect[] {
-  const over = parts.filter(
-    (part) => part.column < rect.column + rect.width && part.column + part.width > rect.column,
-  );
-  const runs: CellRect[] = [];
-  let start = rect.row;
-  const end = rect.row + rect.height;
-  for (let row = rect.row; row <= end; row++) {
-    const bare = row < end && !over.some((part) => row >= part.row && row < part.row + part.height);
-    if (bare) continue;
-    if (row > start) runs.push({ ...rect, row: start, height: row - start });
-    start = row + 1;
-  }
-  return runs;
+/** The parts of a rectangle that lie outside another, as up to four rectangles. */
+function outside(rect: CellRect, other: CellRect): CellRect[] {
+  const left = Math.max(rect.column, other.column);
+  const right = Math.min(rect.column + rect.width, other.column + other.width);
+  const top = Math.max(rect.row, other.row);
+  const bottom = Math.min(rect.row + rect.height, other.row + other.height);
+  if (left >= right || top >= bottom) return [rect];
+  const middle = { row: top, height: bottom - top };
+  return [
+    { ...rect, height: top - rect.row },
+    { ...middle, column: rect.column, width: left - rect.column },
+    { ...middle, column: right, width: rect.column + rect.width - right },
+    { ...rect, row: bottom, height: rect.row + rect.height - bottom },
+  ].filter(({ width, height }) => width > 0 && height > 0);
 }

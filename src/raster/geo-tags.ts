@@ -10,7 +10,7 @@ const metreCode = 9001;
 
 /**
  * Place and CRS as tags of OGC GeoTIFF 1.1 (19-008r4): 33550, 33922, and the key tags 34735 to 34737 as they
- * stood in the input. The tie point is the outer corner, or the first cell's centre when cells stand for points.
+ * stood in the input, and heights as they are stored (ScaleZ 0, tie point at height 0). The tie point is the outer corner, or the first cell's centre when cells stand for points.
  */
 export function geoTags(georeference: Georeference): Directory {
   const { west, north, cellWidth, cellHeight, pixelIsPoint, geoKeys } = georeference;
@@ -37,11 +37,11 @@ export function keysSayPoint(keys: GeoKeyTags): boolean {
 }
 
 /**
- * The keys for elevations that were converted to metres: unchanged for a file in metres or without vertical
- * keys; else the vertical CRS, whose unit no longer holds, gives way to a user-defined one in metres.
+ * The keys for elevations that were converted to heights in metres: unchanged for a file of such or without vertical
+ * keys; else the vertical CRS, whose unit or downward axis no longer holds, gives way to a user-defined one in metres.
  */
-export function keysInMetres(keys: GeoKeyTags, fileUnit: VerticalUnit): GeoKeyTags {
-  if (fileUnit === 'm') return keys;
+export function keysInMetres(keys: GeoKeyTags, fileUnit: VerticalUnit, fromDepths: boolean): GeoKeyTags {
+  if (fileUnit === 'm' && !fromDepths) return keys;
   const { directory } = keys;
   const kept: number[] = [];
   for (let i = 4; i + 3 < directory.length; i += 4) {

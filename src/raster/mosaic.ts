@@ -75,7 +75,7 @@ export function mosaicOf(files: readonly ElevationFile[], level = 0): Mosaic {
   };
 }
 
-/** @throws OverbrimError `unsupported` for another CRS, `bad-input` for another vertical datum than the first file's. */
+/** @throws OverbrimError `unsupported` for another CRS or another vertical datum than the first file's. */
 export function checkSameReference(files: readonly ElevationFile[]): void {
   const first = files[0];
   for (const file of files) {
@@ -86,7 +86,7 @@ export function checkSameReference(files: readonly ElevationFile[]): void {
     const known = files.find((other) => other.vertical.datum !== null)?.vertical.datum ?? null;
     if (datum !== null && datum !== known) {
       throw new OverbrimError(
-        'bad-input',
+        'unsupported',
         `${file.reader.name} has heights above ${datum} and other files above ${known}, which may differ by metres; bring all to one vertical datum first.`,
       );
     }

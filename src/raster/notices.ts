@@ -48,6 +48,9 @@ export async function planNotices(
       });
     }
   }
+  for (const { verticalRemark } of files) {
+    if (verticalRemark !== null) notices.push({ kind: 'vertical-scale', message: verticalRemark });
+  }
   const { crs } = files[0];
   if (await datumShiftLeftOut(crs, epsg)) {
     notices.push({
@@ -66,7 +69,7 @@ export function gapNotice(gap: Gap, { west, north, cellWidth, cellHeight }: Geor
     kind: 'gap',
     message:
       `Between ${gap.between[0]} and ${gap.between[1]} lies a gap of ${gap.width} × ${gap.height} cells at column ` +
-      `${gap.column}, row ${gap.row} (${x} to ${x + gap.width * cellWidth} east, ${y - gap.height * cellHeight} to ${y} north); it stays void, so fill it or name a file that covers it.`,
+      `${gap.column}, row ${gap.row} (${x} to ${x + gap.width * cellWidth} east, ${y - gap.height * cellHeight} to ${y} north); it is taken as a wall unless gaps are declared open (--gaps open), so name a file that covers it.`,
   };
 }
 

@@ -2,6 +2,7 @@ import { OverbrimError } from '../core/error.ts';
 import type { CellRect } from '../core/grid.ts';
 import { type Grid, gridOf, plainFrame } from '../core/grid.ts';
 import { geographicMetrics, projectedMetrics } from '../core/metrics.ts';
+import { absurdNotices } from './absurd-values.ts';
 import { type ByteSource, memorySource } from './byte-source.ts';
 import { stopIfCancelled } from './cancel.ts';
 import { type ElevationFile, elevationFile } from './elevation-file.ts';
@@ -36,7 +37,8 @@ export interface OpenOptions extends Extract {
 /**
  * Reads one elevation file, or several as a mosaic, into float32 metres.
  * The first file named wins where several have a value. Sources are closed in the end.
- * @throws OverbrimError with a sentence for every file that is not, or not safely, an elevation grid.
+ * @throws OverbrimError with a sentence: `unreadable` or `unsupported` for what is wrong with a file, `unit-missing`,
+ * `bad-input` for what is wrong with the options alone.
  */
 export async function openTerrain(
   sources: readonly ByteSource[],
@@ -67,14 +69,16 @@ async function read(sources: readonly ByteSource[], options: OpenOptions): Promi
   const parts = partsIn(plan);
   const gaps = gapsBetween(parts);
   const rects = gaps.map(({ column, row, width, height }) => ({ column, row, width, height }));
-  const grid = gridFor(files[0], plan, elevationM, rects);
+  const grid = fileGrid(() => gridFor(files[0], plan, elevationM, rects));
   const georeference = georeferenceFor(files[0], plan);
+  notices.push(...absurdNotices(grid.elevationM, grid.width, georeference));
   notices.push(...gaps.map((gap) => gapNotice(gap, georeference)));
   notices.push(...seamSteps(parts, grid.elevationM, grid.width).map(seamNotice));
   return {
     grid,
     georeference,
     verticalUnit: files[0].vertical.unit,
+    fromDepths: files[0].vertical.downwards,
     verticalDatum: files.find((file) => file.vertical.datum !== null)?.vertical.datum ?? null,
     files: await Promise.all(files.map(async (file, i) => identified(file, hashes[i]))),
     sha256: await terrainHash(grid.width, grid.height, georeference, grid.elevationM),
@@ -166,6 +170,18 @@ function allocated({ width, height }: CellRect): Float32Array {
       `There is no memory for ${width} × ${height} cells (${4 * width * height} bytes); give a smaller extent (--extent) or cell budget (--cell-budget).`,
       { cause },
     );
+  }
+}
+
+/** What the grid finds wrong is in the cells of the files, not in what the caller asked for. */
+function fileGrid(make: () => Grid): Grid {
+  try {
+    return make();
+  } catch (error) {
+    if (error instanceof OverbrimError && error.code === 'bad-input') {
+      throw new OverbrimError('unreadable', error.message, { cause: error });
+    }
+    throw error;
   }
 }
 

@@ -25,7 +25,8 @@ export interface Plan {
 
 /**
  * Chooses window and overview without reading a cell.
- * @throws OverbrimError `too-large` when no level fits, `bad-input` for a window outside the terrain.
+ * @throws OverbrimError `too-large` when more cells would be read than can be, `bad-input` for a cell budget below
+ * every level or an extent outside the terrain.
  */
 export function readingPlan(files: readonly ElevationFile[], extract: Extract, mostCells: number): Plan {
   const full = mosaicOf(files);
@@ -46,9 +47,16 @@ export function readingPlan(files: readonly ElevationFile[], extract: Extract, m
     smallest = coarse.rect.width * coarse.rect.height;
     if (smallest <= budget) return coarse;
   }
+  const found = `The terrain has ${cells} cells and ${smallest} in its coarsest overview`;
+  if (extract.cellBudget > mostCells) {
+    throw new OverbrimError(
+      'too-large',
+      `${found}; at most ${mostCells} are read, so give a smaller extent (--extent) or add overviews to the file.`,
+    );
+  }
   throw new OverbrimError(
-    'too-large',
-    `The terrain has ${cells} cells and ${smallest} in its coarsest overview; the budget is ${budget}, so raise it, give a smaller window or add overviews to the file.`,
+    'bad-input',
+    `${found}; the budget is ${budget}, so raise it (--cell-budget), give a smaller extent (--extent) or add overviews to the file.`,
   );
 }
 
@@ -68,7 +76,7 @@ function planAt(
     const { west, north, cellWidth, cellHeight } = full.placement;
     throw new OverbrimError(
       'bad-input',
-      `The window lies outside the terrain; expected one within ${full.width} × ${full.height} cells, that is west ${west}, south ${north - full.height * cellHeight}, east ${west + full.width * cellWidth}, north ${north}.`,
+      `The extent (--extent) lies outside the terrain; expected one within ${full.width} × ${full.height} cells, that is west ${west}, south ${north - full.height * cellHeight}, east ${west + full.width * cellWidth}, north ${north}.`,
     );
   }
   return { level, mosaic, rect, droppedColumn: repeats };

@@ -57,6 +57,8 @@ export interface Notice {
     | 'window'
     | 'duplicate-column'
     | 'vertical-datum'
+    | 'vertical-scale'
+    | 'absurd-value'
     | 'datum-shift';
   readonly message: string;
 }
@@ -66,6 +68,8 @@ export interface Terrain {
   readonly grid: Grid;
   readonly georeference: Georeference;
   readonly verticalUnit: VerticalUnit;
+  /** The first file held depths, which became heights, so that the vertical CRS in its keys no longer fits. */
+  readonly fromDepths: boolean;
   /** Name of the vertical datum, null when the file does not tell. */
   readonly verticalDatum: string | null;
   readonly files: readonly TerrainFile[];

@@ -45,7 +45,7 @@ export function urlSource(url: string, options: UrlOptions = {}): ByteSource {
         );
       }
       throw unreadable(
-        'could not be reached; check the address, and that the server allows requests from this page',
+        'could not be reached; check the address and the connection, or, when a page reads it, that the server allows other sites (CORS)',
         cause,
       );
     }

@@ -127,7 +127,7 @@ describe('what values mean', () => {
   test('infinity, and a number beyond float32', async () => {
     const with7 = (z: number) => (small.values as number[]).map((v) => (v === 7 ? z : v));
     const sentence =
-      'bad-input: The elevation at column 2, row 1 is Infinity; expected a finite number of metres or a void, so declare the value as no-data or mend the file.';
+      'unreadable: The elevation at column 2, row 1 is Infinity; expected a finite number of metres or a void, so declare the value as no-data or mend the file.';
     expect(await refusal(opened([{ ...small, values: with7(Number.POSITIVE_INFINITY) }]))).toBe(sentence);
     expect(await refusal(opened([{ ...small, type: 'float64', values: with7(1e300) }]))).toBe(sentence);
   });
@@ -135,7 +135,7 @@ describe('what values mean', () => {
   test('all void', async () => {
     const values = plane(5, 4, () => Number.NaN);
     expect(await refusal(opened([{ ...small, values }]))).toBe(
-      'bad-input: All 20 cells are void; expected at least one elevation, so check the window and the no-data value.',
+      'unreadable: All 20 cells are void; expected at least one elevation, so check the window and the no-data value.',
     );
   });
 });

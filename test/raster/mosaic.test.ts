@@ -114,7 +114,7 @@ describe('files that do not fit together', () => {
         ]),
       ),
     ).toBe(
-      'bad-input: b.tif has heights above EGM2008 geoid and other files above North American Vertical Datum 1988, which may differ by metres; bring all to one vertical datum first.',
+      'unsupported: b.tif has heights above EGM2008 geoid and other files above North American Vertical Datum 1988, which may differ by metres; bring all to one vertical datum first.',
     );
   });
 
@@ -149,7 +149,7 @@ describe('gaps between tiles', () => {
       {
         kind: 'gap',
         message:
-          'Between a.tif and b.tif lies a gap of 2 × 6 cells at column 10, row 2 (500020 to 500024 east, 5599984 to 5599996 north); it stays void, so fill it or name a file that covers it.',
+          'Between a.tif and b.tif lies a gap of 2 × 6 cells at column 10, row 2 (500020 to 500024 east, 5599984 to 5599996 north); it is taken as a wall unless gaps are declared open (--gaps open), so name a file that covers it.',
       },
     ]);
     expect(terrain.grid.elevationM[2 * 18 + 10]).toBeNaN();
@@ -167,14 +167,18 @@ describe('gaps between tiles', () => {
     expect((await opened([tile(0, 0, 5, 5), tile(9, 0, 5, 5)])).grid.gaps).toEqual([]);
   });
 
-  test('where four tiles leave a cross, its middle belongs to it', async () => {
-    const { grid } = await opened([tile(0, 0, 4, 4), tile(5, 0, 4, 4), tile(0, 5, 4, 4), tile(5, 5, 4, 4)]);
+  test('where four tiles leave a cross, its middle belongs to it, told once', async () => {
+    const tiles = [tile(0, 0, 4, 4), tile(5, 0, 4, 4), tile(0, 5, 4, 4), tile(5, 5, 4, 4)];
+    const { grid, notices } = await opened(tiles);
     const covered = new Set(
       grid.gaps.flatMap(({ column, row, width, height }) =>
         plane(width, height, (c, r) => (row + r) * 9 + column + c),
       ),
     );
     expect(covered.size).toBe(9 + 9 - 1);
+    // The corner was once told twice, by both pairs of tiles that face each other across it.
+    expect(grid.gaps.reduce((sum, { width, height }) => sum + width * height, 0)).toBe(covered.size);
+    expect(notices.filter(({ kind }) => kind === 'gap')).toHaveLength(5);
     for (const cell of covered) expect(grid.elevationM[cell]).toBeNaN();
   });
 

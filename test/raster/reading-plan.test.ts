@@ -52,7 +52,7 @@ describe('windows', () => {
     const { grid } = await opened([full], { window: { column: 38, row: -5, width: 10, height: 6 } });
     expect([grid.width, grid.height, grid.elevationM[0]]).toEqual([2, 1, 38]);
     expect(await refusal(opened([full], { bbox: [0, 0, 10, 10] }))).toBe(
-      'bad-input: The window lies outside the terrain; expected one within 40 × 24 cells, that is west 1000, south 1760, east 1400, north 2000.',
+      'bad-input: The extent (--extent) lies outside the terrain; expected one within 40 × 24 cells, that is west 1000, south 1760, east 1400, north 2000.',
     );
   });
 
@@ -116,7 +116,13 @@ describe('overviews', () => {
 
   test('none small enough', async () => {
     expect(await refusal(opened([full], { cellBudget: 59 }))).toBe(
-      'too-large: The terrain has 960 cells and 60 in its coarsest overview; the budget is 59, so raise it, give a smaller window or add overviews to the file.',
+      'bad-input: The terrain has 960 cells and 60 in its coarsest overview; the budget is 59, so raise it (--cell-budget), give a smaller extent (--extent) or add overviews to the file.',
+    );
+  });
+
+  test('a budget above the limit is not at fault', async () => {
+    expect(await refusal(opened([full], { cellBudget: 70, limits: { cells: 59 } }))).toBe(
+      'too-large: The terrain has 960 cells and 60 in its coarsest overview; at most 59 are read, so give a smaller extent (--extent) or add overviews to the file.',
     );
   });
 

@@ -136,7 +136,7 @@ describe('URLs', () => {
     const url = await serve(() => {});
     await new Promise((resolve) => servers[0].close(resolve));
     expect(await failing(url)).toBe(
-      `unreadable: ${url} could not be reached; check the address, and that the server allows requests from this page.`,
+      `unreadable: ${url} could not be reached; check the address and the connection, or, when a page reads it, that the server allows other sites (CORS).`,
     );
   });
 
