@@ -2,6 +2,7 @@
 import { main } from './main.ts';
 import { sparedWrites } from './spared-writes.ts';
 
-const printed = sparedWrites(process);
-const code = await main(process.argv.slice(2), process);
+const args = process.argv.slice(2);
+const printed = sparedWrites(process, args.includes('--json'));
+const code = await main(args, process);
 process.exitCode = code === 0 ? await printed() : code;

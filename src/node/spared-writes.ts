@@ -15,16 +15,15 @@ const left = new Set(['EPIPE', 'ERR_STREAM_DESTROYED']);
  * on standard error, once.
  * @returns waits for what was printed and gives the exit code for it.
  */
-export function sparedWrites({ stdout, stderr }: Streams): () => Promise<number> {
+export function sparedWrites({ stdout, stderr }: Streams, asJson: boolean): () => Promise<number> {
   let code: number = exitCodes.done;
   // What cannot be told on standard error cannot be told at all.
   stderr.on('error', () => {});
   stdout.on('error', (error: NodeJS.ErrnoException) => {
     if (code !== exitCodes.done || left.has(error.code ?? '')) return;
     code = exitCodes.failed;
-    stderr.write(
-      `overbrim: Standard output could not be written (${error.message}); write it where there is space.\n`,
-    );
+    const message = `Standard output could not be written (${error.message}); write it where there is space.`;
+    stderr.write(asJson ? `${JSON.stringify({ code: 'failed', message })}\n` : `overbrim: ${message}\n`);
   });
   return () =>
     new Promise((resolve) => {

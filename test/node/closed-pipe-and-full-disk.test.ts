@@ -67,6 +67,11 @@ it('a full disk under standard output was a Node stack: it is told in a sentence
   expect(ran.code).toBe(1);
   expect(ran.err).toMatch(sentence);
   expect(written('untold')).toEqual(whole('untold'));
+  const asJson = await ontoFullDisk(['list', '--json'], 'stdout');
+  expect(JSON.parse(asJson.err)).toMatchObject({
+    code: 'failed',
+    message: expect.stringMatching(/^Standard/),
+  });
 });
 
 it('a full disk under standard error broke a run off: it goes on to its end', async () => {

@@ -81,6 +81,16 @@ describe('outlets from GeoJSON', () => {
     );
   });
 
+  it('are told of in the plural where they hold several ponds', async () => {
+    const pitOfB: Geometry = { type: 'Point', coordinates: at(6.5, 1.5) };
+    const { notes } = await withOutlets(
+      collection(feature(pitOfA, { levelM: 17.5 }), feature(pitOfB, { levelM: 11 })),
+    );
+    expect(notes).toContain(
+      '2 outermost ponds stand at the level of water outside an outlet (heldByOutlet); their capacity is no storage of the ground.',
+    );
+  });
+
   it('take the lowest of several levels, and none above the sill', async () => {
     const levels = (...all: (number | null)[]) =>
       withOutlets(collection(...all.map((levelM) => feature(pitOfA, { levelM }))));

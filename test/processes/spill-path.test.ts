@@ -204,10 +204,15 @@ describe('spill path', () => {
     expect(notes).toEqual(['The path starts on an outlet, so water leaves there at once.']);
   });
 
-  it('was empty from an outlet whose water lies above the ground too: it tells that level', async () => {
+  it('tells the level from an outlet whose water lies above the ground', async () => {
     const { properties, section } = await pathOf(twoPonds, '500095,985', { inputs: { edgeLevel: 7 } });
     expect(properties).toHaveLength(1);
-    expect(properties[0]).toMatchObject({ fromElevationM: 7, toElevationM: 7, endsAt: 'outlet' });
+    expect(properties[0]).toMatchObject({
+      kind: 'pond',
+      fromElevationM: 7,
+      toElevationM: 7,
+      endsAt: 'outlet',
+    });
     expect(section.stations).toMatchObject([{ groundM: 5, waterM: 7 }]);
   });
 
