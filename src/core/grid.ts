@@ -91,7 +91,7 @@ export function gridOf(
   if (voids === elevationM.length) {
     throw new OverbrimError(
       'bad-input',
-      `All ${voids} cells are void; expected at least one elevation, so check the window and the no-data value.`,
+      `All ${voids} cells are void; expected at least one elevation, so check the extent and the no-data value.`,
     );
   }
   return { width, height, elevationM, metrics, frame, gaps };

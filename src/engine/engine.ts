@@ -197,7 +197,7 @@ function told(error: unknown): ToldError {
   if (error instanceof RangeError && /allocation|array (buffer|length)/i.test(what)) {
     return {
       code: 'out-of-memory',
-      message: `There is not enough memory for this terrain (${what}); choose a smaller window or a coarser overview.`,
+      message: `There is not enough memory for this terrain (${what}); choose a smaller extent or cell budget.`,
     };
   }
   return { code: 'failed', message: `This is a fault of the program, please report it: ${what}` };

@@ -136,7 +136,7 @@ function explain(error: unknown, asJson: boolean, terminal: Terminal): number {
   if (error instanceof RangeError && /allocation|array (buffer|length)/i.test(error.message)) {
     return say(
       'out-of-memory',
-      `There is not enough memory (${error.message}); choose a smaller window or fewer files.`,
+      `There is not enough memory (${error.message}); choose a smaller extent (--extent) or fewer files.`,
       exitCodes.failed,
     );
   }

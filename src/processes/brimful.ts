@@ -167,7 +167,7 @@ function recordTerrain(terrain: Terrain, context: JobContext): void {
   const { grid, georeference } = terrain;
   context.record('terrain', {
     sha256: terrain.sha256,
-    files: terrain.files.map(({ name, sha256 }) => ({ name, sha256 })),
+    files: terrain.files.map(({ name, sha256, hashOf }) => ({ name, sha256, hashOf })),
     width: grid.width,
     height: grid.height,
     crs: georeference.crs.name,

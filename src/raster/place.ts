@@ -13,14 +13,6 @@ export function cellCentre({ grid, georeference }: Placed, cell: number): Point 
   ];
 }
 
-/** A corner of cells, by column 0…width and row 0…height, in units of the terrain's CRS. */
-export function cornerAt({ georeference }: Placed, column: number, row: number): Point {
-  return [
-    georeference.west + column * georeference.cellWidth,
-    georeference.north - row * georeference.cellHeight,
-  ];
-}
-
 /** Column and row of a point as fractions (0,0 = outer north-west corner); longitudes are brought into the grid. */
 export function gridPosition({ grid, georeference }: Placed, [x, y]: Point): Point {
   let column = (x - georeference.west) / georeference.cellWidth;

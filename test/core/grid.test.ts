@@ -64,7 +64,7 @@ describe('is refused in a sentence', () => {
   it('with nothing but voids', () => {
     expect(() => gridOf(2, 2, new Float32Array(4).fill(Number.NaN), metrics(2))).toThrow(
       refused(
-        'All 4 cells are void; expected at least one elevation, so check the window and the no-data value.',
+        'All 4 cells are void; expected at least one elevation, so check the extent and the no-data value.',
       ),
     );
   });

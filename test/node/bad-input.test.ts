@@ -241,7 +241,7 @@ describe('failure exits with 1 and says', () => {
     [
       'that all is void',
       terrain(empty),
-      'All 2 cells are void; expected at least one elevation, so check the window and the no-data value.',
+      'All 2 cells are void; expected at least one elevation, so check the extent and the no-data value.',
     ],
     [
       'that an elevation is infinite',

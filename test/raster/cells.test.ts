@@ -135,7 +135,7 @@ describe('what values mean', () => {
   test('all void', async () => {
     const values = plane(5, 4, () => Number.NaN);
     expect(await refusal(opened([{ ...small, values }]))).toBe(
-      'unreadable: All 20 cells are void; expected at least one elevation, so check the window and the no-data value.',
+      'unreadable: All 20 cells are void; expected at least one elevation, so check the extent and the no-data value.',
     );
   });
 });
