@@ -39,6 +39,7 @@ const tickMs = 500;
  * @csspart said - What was done last.
  * @csspart caution - The caution.
  * @cssproperty --brim-ink - Text.
+ * @cssproperty --brim-relief-blend - How the relief lies on the map beneath it, on the map or above it; `normal` covers it.
  * @cssproperty --brim-paper - Ground of cards.
  * @cssproperty --brim-accent - Buttons, focus, marks.
  */

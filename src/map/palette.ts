@@ -12,6 +12,8 @@ export interface Palette {
   readonly shadow: Rgb;
   readonly level: Rgb;
   readonly lit: Rgb;
+  /** How relief lies on the drawing beneath it: it shades that in place of covering it. */
+  readonly blend: 'multiply' | 'hard-light';
   /** Path, pour points and what is selected. */
   readonly accent: Rgb;
   /** Around the accent, so that it stands off from land and water. */
@@ -50,6 +52,7 @@ export const lightPalette: Palette = {
   shadow: [104, 103, 100],
   level: [229, 227, 221],
   lit: [255, 255, 253],
+  blend: 'multiply',
   accent: [190, 48, 24],
   halo: [255, 255, 255],
   shore: [38, 84, 130],
@@ -61,6 +64,7 @@ export const darkPalette: Palette = {
   shadow: [16, 17, 18],
   level: [58, 60, 62],
   lit: [128, 129, 131],
+  blend: 'hard-light',
   accent: [255, 138, 96],
   halo: [24, 25, 27],
   shore: [92, 142, 190],

@@ -34,6 +34,11 @@ export abstract class PixelLayer extends Layer {
     this.#cells = cells;
   }
 
+  /** How the layer lies on what is beneath it, as CSS has it. */
+  protected get blend(): string {
+    return '';
+  }
+
   /** Colours of all samples, packed, 0 = transparent. `isNew`: the cells are others than last time. */
   protected abstract paint(cells: GatheredCells, isNew: boolean, out: Uint32Array): void;
 
@@ -61,6 +66,7 @@ export abstract class PixelLayer extends Layer {
     const container = this.#placed(at);
     const opacity = String(state.opacity);
     if (container.style.opacity !== opacity) container.style.opacity = opacity;
+    if (container.style.mixBlendMode !== this.blend) container.style.mixBlendMode = this.blend;
     container.style.clipPath = clipPolygon(state.extent, frame.coordinateToPixelTransform);
     const cells = this.#cells.at(at, frame.viewState.projection);
     if (cells.key !== this.#shownKey) {

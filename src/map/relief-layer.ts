@@ -5,12 +5,16 @@ import type { GatheredCells, PixelCells } from './pixel-cells.ts';
 import { PixelLayer, type PixelLayerOptions } from './pixel-layer.ts';
 import { PooledShade } from './pooled-shade.ts';
 
-type Greys = Pick<Palette, 'shadow' | 'level' | 'lit'>;
+type Greys = Pick<Palette, 'shadow' | 'level' | 'lit' | 'blend'>;
 
-/** Shaded relief in greys, transparent on voids. */
+/**
+ * Shaded relief in greys, transparent on voids. It shades what the map shows beneath it; a page that wants it to
+ * cover that sets the custom property `--brim-relief-blend: normal`.
+ */
 export class ReliefLayer extends PixelLayer {
   readonly #light: Light;
   #colour: Uint32Array;
+  #blend: Palette['blend'];
   #shade: PooledShade | undefined;
 
   constructor(
@@ -22,6 +26,11 @@ export class ReliefLayer extends PixelLayer {
     super('brim-relief', cells, options);
     this.#light = light;
     this.#colour = greys(palette, light);
+    this.#blend = palette.blend;
+  }
+
+  protected override get blend(): string {
+    return `var(--brim-relief-blend, ${this.#blend})`;
   }
 
   override setPixelCells(cells: PixelCells | undefined): void {
@@ -31,6 +40,8 @@ export class ReliefLayer extends PixelLayer {
 
   setPalette(palette: Greys): void {
     this.#colour = greys(palette, this.#light);
+    this.#blend = palette.blend;
+    this.changed();
     this.repaint();
   }
 
