@@ -11,7 +11,7 @@ export const elementsManifest = {
       const path = `src/elements/${file.replaceAll('\\', '/')}`;
       return ts.createSourceFile(path, readFileSync(path, 'utf8'), ts.ScriptTarget.ES2022, true);
     });
-    const manifest = create({ modules, plugins: [...litPlugin(), definitions, asShipped] });
+    const manifest = create({ modules, plugins: [...litPlugin(), definitions, onlyTold, asShipped] });
     this.emitFile({
       type: 'asset',
       fileName: 'custom-elements.json',
@@ -34,6 +34,42 @@ const definitions = {
         module: moduleDoc.path.replace(/\.ts$/, '.component.ts'),
       },
     });
+  },
+};
+
+const toldAttributes = new Map();
+
+/** What the doc tags tell is the contract; state, private members and events of the inside are none of it. */
+const onlyTold = {
+  name: 'only-told',
+  analyzePhase({ node, moduleDoc }) {
+    if (!ts.isClassDeclaration(node)) return;
+    const element = moduleDoc.declarations.find(({ name }) => name === node.name?.text);
+    const tags = ts.getJSDocTags(node).filter(({ tagName }) => tagName.text === 'attr');
+    const names = tags.map(
+      ({ comment }) =>
+        String(comment)
+          .replace(/^\{[^}]*\}\s*/, '')
+          .split(' ')[0],
+    );
+    if (element) toldAttributes.set(`${moduleDoc.path} ${element.name}`, new Set(names));
+  },
+  packageLinkPhase({ customElementsManifest }) {
+    for (const { declarations, path } of customElementsManifest.modules) {
+      for (const element of declarations.filter(({ customElement }) => customElement)) {
+        element.events = element.events?.filter(({ name }) => name?.startsWith('brim-'));
+        const names = toldAttributes.get(`${path} ${element.name}`);
+        element.attributes = element.attributes?.filter(({ name }) => names?.has(name));
+        const told = new Set(element.attributes?.map(({ fieldName, name }) => fieldName ?? name));
+        element.members = element.members?.filter(
+          ({ name, privacy, attribute, description, inheritedFrom }) =>
+            !name.startsWith('#') &&
+            (inheritedFrom === undefined || told.has(name)) &&
+            (privacy ?? 'public') === 'public' &&
+            (description !== undefined || (attribute !== undefined && told.has(name))),
+        );
+      }
+    }
   },
 };
 

@@ -60,7 +60,8 @@ function checkedList(name: string, input: InputDescription, value: Json): Json {
 
 function checkedValue(name: string, input: InputDescription, value: Json): Json {
   const result = new Validator(input.schema as Schema, '7', true).validate(value);
-  if (!result.valid) {
+  // JSON has no NaN and no infinity, but a program may hand them over.
+  if (!result.valid || (typeof value === 'number' && !Number.isFinite(value))) {
     throw new OverbrimError(
       'bad-input',
       `The input "${name}" is ${shown(value)}; expected ${expectation(input, value)}.`,
@@ -70,7 +71,7 @@ function checkedValue(name: string, input: InputDescription, value: Json): Json 
 }
 
 function shown(value: Json): string {
-  const text = JSON.stringify(value);
+  const text = typeof value === 'number' ? String(value) : JSON.stringify(value);
   return text.length > 80 ? `${text.slice(0, 77)}…` : text;
 }
 

@@ -32,6 +32,10 @@ describe('checkedInputs', () => {
       { depth: '3' },
       'The input "depth" is "3"; expected a number of at least 0 and at most 10: least depth, metres.',
     ],
+    [
+      { depth: Number.NaN },
+      'The input "depth" is NaN; expected a number of at least 0 and at most 10: least depth, metres.',
+    ],
     [{ side: 'up' }, 'The input "side" is "up"; expected one of left, right.'],
     [{ count: 1.5 }, 'The input "count" is 1.5; expected a whole number: how many.'],
     [{ wet: 1 }, 'The input "wet" is 1; expected a yes or no (true, false): whether wet.'],

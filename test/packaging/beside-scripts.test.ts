@@ -38,6 +38,41 @@ test('the register of CRS codes gives what the package of all codes gives', asyn
   expect(register[5703]).toMatchObject({ name: 'NAVD88 height', wkt: all[5703].wkt });
 });
 
+test('custom-elements.json tells the attributes and events that pages may use, and no more', () => {
+  const { modules } = json('dist/custom-elements.json');
+  const elements = modules
+    .flatMap(({ declarations }: { declarations?: Record<string, unknown>[] }) => declarations ?? [])
+    .filter(({ tagName }: Record<string, unknown>) => tagName !== undefined);
+  const names = (list: unknown): string[] => ((list ?? []) as { name: string }[]).map(({ name }) => name);
+  const told = Object.fromEntries(
+    elements.map(({ tagName, attributes, events }: Record<string, unknown>) => [
+      tagName,
+      { attributes: names(attributes).sort(), events: names(events).sort() },
+    ]),
+  );
+  expect(told).toEqual({
+    'brim-host': {
+      attributes: ['for', 'lang', 'map', 'units', 'without-caution', 'worker-url'],
+      events: ['brim-error'],
+    },
+    'brim-legend': { attributes: ['host'], events: [] },
+    'brim-pour-points': {
+      attributes: ['host', 'min-area', 'min-capacity', 'min-depth'],
+      events: ['brim-ponds', 'brim-select'],
+    },
+    'brim-spill-path': { attributes: ['host'], events: ['brim-path'] },
+    'brim-terrain': {
+      attributes: ['edges', 'host', 'neighbours', 'src', 'vertical-unit', 'voids', 'without-fit'],
+      events: ['brim-terrain'],
+    },
+  });
+  expect(JSON.stringify(elements)).not.toContain('"#');
+});
+
+test.each(['overbrim.js', 'overbrim-worker.js'])('%s shows its letters on a page of any encoding', (file) => {
+  expect(/[\u0080-\uffff]/.test(readFileSync(join(root, 'dist', file), 'utf8'))).toBe(false);
+});
+
 // The schema that the Custom Elements Manifest publishes: see test/data/custom-elements-manifest/README.md.
 test('custom-elements.json keeps to its published schema and names what is shipped', () => {
   const manifest = json('dist/custom-elements.json');
