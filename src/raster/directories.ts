@@ -29,6 +29,11 @@ export interface TiffFile {
 /** Bytes of one value by TIFF type (TIFF 6.0, section 2; 16 to 18 are BigTIFF's). 0: no such type. */
 export const typeBytes = [0, 1, 1, 2, 4, 8, 1, 1, 2, 4, 8, 4, 8, 4, 0, 0, 8, 8, 8];
 
+/** Whether bytes start with a tag, as HTML and XML do. */
+function looksLikeMarkup(bytes: Uint8Array): boolean {
+  return /^\s*<[!?a-z]/i.test(String.fromCharCode(...bytes.subarray(0, 8)));
+}
+
 /**
  * Walks the chain of directories without reading what they point to.
  * 1. The header tells byte order, plain TIFF (42) or BigTIFF (43), and the first directory's place.
@@ -82,6 +87,12 @@ async function headerOf(reader: RangeReader): Promise<Header> {
   const littleEndian = order === 'II';
   const version = view.getUint16(2, littleEndian);
   if ((order !== 'II' && order !== 'MM') || (version !== 42 && version !== 43)) {
+    if (looksLikeMarkup(bytes)) {
+      throw new OverbrimError(
+        'unreadable',
+        `${reader.name} is a web page or other marked-up text, not a TIFF file; servers send one in place of a missing file, so check the address.`,
+      );
+    }
     const found = Array.from(bytes.subarray(0, 4), (byte) => byte.toString(16).padStart(2, '0')).join(' ');
     throw new OverbrimError(
       'unreadable',
