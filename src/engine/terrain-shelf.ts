@@ -20,8 +20,10 @@ const readingShare = 0.3;
 const surveyShare = 0.5;
 /** Text inputs are outlines and points; what is larger is some other file. */
 const mostTextBytes = 256 * 2 ** 20;
+/** Terrains kept: the one at hand, and the one before in case the page goes back to it. */
+const mostTerrains = 2;
 
-/** Keeps terrains and surveys, so that a second question reads and surveys nothing again. */
+/** Keeps the latest terrains and their surveys, so that a second question reads and surveys nothing again. */
 export class TerrainShelf implements TerrainStore {
   readonly #reach: Reach;
   readonly #terrains = new Map<string, Terrain>();
@@ -36,7 +38,10 @@ export class TerrainShelf implements TerrainStore {
     const { references, ...extract } = request;
     const key = JSON.stringify(request);
     const held = this.#terrains.get(key);
-    if (held !== undefined) return held;
+    if (held !== undefined) {
+      this.#keep(key, held);
+      return held;
+    }
     context.progress(0, 'reading elevation');
     const sources = await this.#sources(references);
     const terrain = await openTerrain(sources, {
@@ -45,8 +50,18 @@ export class TerrainShelf implements TerrainStore {
       signal: context.signal,
       progress: (done) => context.progress(readingShare * done, 'reading elevation'),
     });
-    this.#terrains.set(key, terrain);
+    this.#keep(key, terrain);
     return terrain;
+  }
+
+  /** Puts a terrain last, and lets go of those that were longest without a question. */
+  #keep(key: string, terrain: Terrain): void {
+    this.#terrains.delete(key);
+    this.#terrains.set(key, terrain);
+    for (const oldest of this.#terrains.keys()) {
+      if (this.#terrains.size <= mostTerrains) break;
+      this.#terrains.delete(oldest);
+    }
   }
 
   /** Opens all, or closes again what is open. */

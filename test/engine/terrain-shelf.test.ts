@@ -58,6 +58,18 @@ describe('TerrainShelf', () => {
     expect(closed).toEqual(opened);
   });
 
+  it('lets go of all but the two terrains asked for last', async () => {
+    const { shelf, opened } = shelfOf({ a: file, b: file, c: file });
+    const { context } = contextOf();
+    for (const name of ['a', 'b', 'a', 'c', 'a', 'c']) {
+      await shelf.terrain({ references: [name], verticalUnit: 'm' }, context);
+    }
+    expect(opened).toEqual(['a', 'b', 'c']);
+    await shelf.terrain({ references: ['b'], verticalUnit: 'm' }, context);
+    await shelf.terrain({ references: ['a'], verticalUnit: 'm' }, context);
+    expect(opened).toEqual(['a', 'b', 'c', 'b', 'a']);
+  });
+
   it('surveys once for each choice of neighbours and made pits', async () => {
     const { shelf } = shelfOf({ a: file });
     const { context, breaths, told } = contextOf();
