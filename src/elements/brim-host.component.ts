@@ -1,6 +1,6 @@
 import { ContextProvider } from '@lit/context';
 import { css, html, LitElement, nothing, type PropertyDeclarations, type PropertyValues } from 'lit';
-import { openEngine } from '../engine/client.ts';
+import { type EngineClient, openEngine } from '../engine/client.ts';
 import { drawOn } from './drawing.ts';
 import { BrimErrorEvent } from './events/brim-error-event.ts';
 import { findMap } from './find-map.ts';
@@ -14,9 +14,10 @@ import { toneAround, watchTone } from './tone.ts';
 import { Voice } from './voice.ts';
 import { words } from './words.ts';
 
-/** How often a map that is not there yet is looked for, milliseconds, and how long before that is told. */
+/** How often a map that is not there yet is looked for, milliseconds, how long before that is told, how often then. */
 const lookMs = 200;
 const patienceMs = 3000;
+const rareLookMs = 1000;
 /** Between two looks at the clock while something runs, milliseconds. */
 const tickMs = 500;
 
@@ -66,6 +67,8 @@ export class BrimHost extends LitElement {
   readonly session = new Session(async () => this.engine ?? (await this.#opened()));
   #endDrawing: (() => void) | undefined;
   #drawnMap: unknown;
+  #mapFault: number | undefined;
+  #own: Promise<EngineClient> | undefined;
   #endWatch: (() => void) | undefined;
   #lookingSince = 0;
   #nextLook: ReturnType<typeof setTimeout> | undefined;
@@ -99,11 +102,20 @@ export class BrimHost extends LitElement {
     clearInterval(this.#tick);
     this.#tick = undefined;
     this.#endWatch?.();
-    this.#unbind();
-    // A host that is only moved on the page is back at once.
+    // A host that is only moved on the page is back at once, and keeps all it has.
     queueMicrotask(() => {
-      if (!this.isConnected) this.session.running.dismiss('terrain', 'ponds', 'path');
+      if (!this.isConnected) this.#leave();
     });
+  }
+
+  /** Frees the map and the engine; a host that comes back opens another. */
+  #leave(): void {
+    this.#unbind();
+    this.session.running.leave();
+    // A place where it cannot run has been told; an engine that others share is theirs to close.
+    this.#own?.then((engine) => engine.close()).catch(() => {});
+    this.#own = undefined;
+    document.dispatchEvent(new Event(hostConnected));
   }
 
   protected override willUpdate(changed: PropertyValues): void {
@@ -136,16 +148,18 @@ export class BrimHost extends LitElement {
 
   /** Looks for the map until it is there: pages often make it after their elements. */
   #look(): void {
-    clearTimeout(this.#nextLook);
+    this.#withdraw();
     this.#lookingSince = Date.now();
     this.#lookAgain();
   }
 
   #lookAgain(): void {
+    clearTimeout(this.#nextLook);
     if (!this.isConnected) return;
     try {
       const found = findMap(this.map, this.for, this.getRootNode() as Document | ShadowRoot);
       if ('map' in found) {
+        this.#withdraw();
         if (found.map === this.#drawnMap) return;
         this.#unbind();
         this.#drawnMap = found.map;
@@ -154,12 +168,26 @@ export class BrimHost extends LitElement {
       }
       this.#unbind();
       const waitedMs = Date.now() - this.#lookingSince;
-      if (waitedMs < patienceMs) this.#nextLook = setTimeout(() => this.#lookAgain(), lookMs);
-      else this.session.fault('bad-input', words(this.#language(), found.missing, found.values));
+      const isLate = waitedMs >= patienceMs;
+      if (isLate && this.#mapFault === undefined) {
+        const sentence = words(this.#language(), found.missing, found.values);
+        this.#mapFault = this.session.fault('bad-input', sentence);
+      }
+      this.#nextLook = setTimeout(() => this.#lookAgain(), isLate ? rareLookMs : lookMs);
     } catch (error) {
       this.#unbind();
-      this.session.fault('bad-input', error instanceof Error ? error.message : String(error));
+      this.#withdraw();
+      this.#mapFault = this.session.fault(
+        'bad-input',
+        error instanceof Error ? error.message : String(error),
+      );
     }
+  }
+
+  /** Takes back what was told of the map. */
+  #withdraw(): void {
+    if (this.#mapFault !== undefined) this.session.forgetFault(this.#mapFault);
+    this.#mapFault = undefined;
   }
 
   #unbind(): void {
@@ -189,10 +217,11 @@ export class BrimHost extends LitElement {
   }
 
   #opened(): Promise<Engine> {
-    return openEngine({
+    this.#own = openEngine({
       ...(this.workerUrl === null ? {} : { workerUrl: this.workerUrl }),
       onStepBack: (sentence) => this.session.put({ said: sentence }),
     });
+    return this.#own;
   }
 }
 

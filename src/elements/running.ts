@@ -44,6 +44,12 @@ export class Running extends EventTarget {
     return this.#engine;
   }
 
+  /** Dismisses all questions and lets go of the engine; the next question opens it anew. */
+  leave(): void {
+    this.dismiss('terrain', 'ponds', 'path');
+    this.#engine = undefined;
+  }
+
   dismiss(...kinds: QuestionKind[]): void {
     for (const kind of kinds) this.#jobs.get(kind)?.dismiss();
   }

@@ -5,7 +5,7 @@ import type { Session, SessionChange } from './session.ts';
 /** How elements inside a host find its session. */
 export const sessionContext = createContext<Session>(Symbol.for('overbrim.session'));
 
-/** Event by which a host tells the page that it is there. */
+/** Event by which a host tells the page that it is there, or, on the document, that it is gone. */
 export const hostConnected = 'brim-host-connected';
 
 /** An element that may name its host by id and hears of changes. */
@@ -41,28 +41,33 @@ export class SessionLink implements ReactiveController {
 
   hostDisconnected(): void {
     document.removeEventListener(hostConnected, this.#onHost);
-    this.#join(undefined);
+    // An element that is only moved on the page is back at once, mostly with the same session.
+    queueMicrotask(() => {
+      if (!this.#element.isConnected) this.#join(undefined);
+    });
   }
 
   hostUpdate(): void {
-    if (this.#named !== this.#element.host) {
-      this.#join(undefined);
-      this.#find();
-    }
+    if (this.#named !== this.#element.host) this.#find();
   }
 
   #find(): void {
     const element = this.#element;
-    if (this.#session || !element.isConnected) return;
+    if (!element.isConnected) return;
     this.#named = element.host;
     if (element.host !== null) {
       const root = element.getRootNode() as Document | ShadowRoot;
       const found = root.getElementById(element.host) ?? document.getElementById(element.host);
-      const session: Session | undefined = found ? Reflect.get(found, 'session') : undefined;
-      if (session) this.#join(session);
+      this.#join(found ? Reflect.get(found, 'session') : undefined);
       return;
     }
-    element.dispatchEvent(new ContextEvent(sessionContext, element, (session) => this.#join(session)));
+    let around: Session | undefined;
+    element.dispatchEvent(
+      new ContextEvent(sessionContext, element, (session) => {
+        around = session;
+      }),
+    );
+    this.#join(around);
   }
 
   #join(session: Session | undefined): void {

@@ -105,10 +105,12 @@ export class Session extends EventTarget {
     if (keys.length > 0) this.dispatchEvent(new SessionChange(new Set(keys)));
   }
 
-  /** Keeps an error for the status line. */
-  fault(code: string, message: string): void {
+  /** Keeps an error for the status line; gives the number by which it is forgotten. */
+  fault(code: string, message: string): number {
     const others = this.#state.faults.filter((fault) => fault.message !== message);
-    this.put({ faults: [...others, { id: ++this.#lastFault, code, message }] });
+    const id = ++this.#lastFault;
+    this.put({ faults: [...others, { id, code, message }] });
+    return id;
   }
 
   forgetFault(id: number): void {

@@ -151,6 +151,14 @@ describe('the map', () => {
     expect(await fault(page).textContent()).toMatch(/[Ss]et the property map/);
   });
 
+  it('that comes after its absence was told is bound, and the message goes', async () => {
+    const page = await pageWith(hostWith('', 'map="tardy"'));
+    await fault(page).waitFor();
+    await page.evaluate(() => Object.assign(window, { tardy: window.townMap }));
+    await fault(page).waitFor({ state: 'detached' });
+    expect(await page.evaluate(() => window.elementsStage.state().map === window.townMap)).toBe(true);
+  });
+
   it('may come later than the host, by name or from an element', async () => {
     const page = await pageWith(hostWith('', 'map="later"') + hostWith('', 'for="map"'));
     const isBound = (): Promise<boolean[]> =>
@@ -209,6 +217,45 @@ describe('a host', () => {
     await legend.filter({ hasText: 'has no host' }).waitFor();
     await page.evaluate(() => document.querySelector('brim-legend')?.setAttribute('host', 'late'));
     await legend.filter({ hasText: 'Choose a terrain first' }).waitFor();
+  });
+
+  it('that is replaced hands an element elsewhere to the new one, and one that goes leaves it', async () => {
+    const page = await pageWith(
+      `${hostWith('', 'id="one" lang="en"')}<brim-legend host="one"></brim-legend>`,
+    );
+    const heading = page.locator('brim-legend section');
+    const first = page.locator('brim-legend', { hasText: 'Choose a terrain first' });
+    await first.waitFor();
+    await page.evaluate(
+      (html) => {
+        const next = document.createRange().createContextualFragment(html);
+        document.getElementById('one')?.replaceWith(next);
+      },
+      hostWith('', 'id="one" lang="fr"'),
+    );
+    await expect.poll(() => heading.getAttribute('lang')).toBe('fr');
+    await page.evaluate(() => document.getElementById('one')?.remove());
+    await page.locator('brim-legend', { hasText: 'has no host' }).waitFor();
+  });
+
+  it('that goes ends its worker; one that is only moved keeps it, its terrain and the selection', async () => {
+    const page = await pageWith(hostWith(unit.replace('src=', 'vertical-unit="m" src=')));
+    await page.locator('brim-pour-points .pond').first().click();
+    await page.locator('brim-pour-points [part=detail]').waitFor();
+    const moved = await page.evaluate(async () => {
+      const { surveyed, ponds, selected, layers } = window.elementsStage.state();
+      const host = document.querySelector('brim-host');
+      if (host) document.body.append(host);
+      await new Promise((done) => setTimeout(done, 100));
+      const now = window.elementsStage.state();
+      const jobs = host?.session.running.jobs.length;
+      const same = now.surveyed === surveyed && now.ponds === ponds && now.layers === layers;
+      return { same, jobs, selected: selected !== null && now.selected === selected };
+    });
+    expect(moved).toEqual({ same: true, jobs: 0, selected: true });
+    expect(page.workers().length).toBe(1);
+    await page.evaluate(() => document.querySelector('brim-host')?.remove());
+    await expect.poll(() => page.workers().length).toBe(0);
   });
 
   it('tells what runs, for how long, and cancels at once; a terrain that was there stays', async () => {
