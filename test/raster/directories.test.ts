@@ -12,11 +12,14 @@ describe('what is no sound TIFF file', () => {
     );
   });
 
-  test.each(['<!doctype html><p>no', '\n<?xml version="1.0"?>', '<html lang="en">'])('a web page: %j', async (page) => {
-    expect(await refusal(opened([text(page)]))).toBe(
-      'unreadable: a.tif is a web page or other marked-up text, not a TIFF file; servers send one in place of a missing file, so check the address.',
-    );
-  });
+  test.each(['<!doctype html><p>no', '\n<?xml version="1.0"?>', '<html lang="en">'])(
+    'a web page: %j',
+    async (page) => {
+      expect(await refusal(opened([text(page)]))).toBe(
+        'unreadable: a.tif is a web page or other marked-up text, not a TIFF file; servers send one in place of a missing file, so check the address.',
+      );
+    },
+  );
 
   test('an empty file', async () => {
     expect(await refusal(opened([new Uint8Array(0)]))).toBe(
