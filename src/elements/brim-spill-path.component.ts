@@ -36,6 +36,7 @@ export class BrimSpillPath extends Card {
   /** What is wrong with what was typed. */
   declare protected problem: string;
   declare protected showsAll: boolean;
+  #listedFor: Session | undefined;
   readonly #typed = createRef<HTMLInputElement>();
   readonly #mapEvents = new MapEvents(this, {
     click: (event) => this.#clicked(event.coordinate),
@@ -56,6 +57,11 @@ export class BrimSpillPath extends Card {
 
   override sessionChanged(session: Session, change: SessionChange | undefined): void {
     super.sessionChanged(session, change);
+    if (!change) {
+      this.#listedFor?.pathLists.delete(this);
+      this.#listedFor = session;
+      session.pathLists.add(this);
+    }
     if (!change || change.keys.has('map')) this.#mapEvents.bind(session.state.map);
     if (change?.keys.has('path')) {
       this.showsAll = false;
@@ -76,7 +82,7 @@ export class BrimSpillPath extends Card {
   #starts(): unknown {
     const { voice, session, state } = this;
     if (!session || !state?.surveyed) return nothing;
-    const { picking, selected, ponds, map, surveyed } = state;
+    const { picking, selected, ponds, map, layers, surveyed } = state;
     const pond = selected === null ? undefined : ponds?.byId.get(selected);
     return html`
       <p part="hint" class="hint">${voice.say('pathHint')}</p>
@@ -104,7 +110,7 @@ export class BrimSpillPath extends Card {
       ${placeForm(voice, {
         crs: this.crs,
         terrainName: surveyed.view.georeference.crs.name,
-        viewCode: map?.getView().getProjection().getCode() ?? null,
+        viewCode: layers?.problem ? null : (map?.getView().getProjection().getCode() ?? null),
         problem: this.problem,
         field: this.#typed,
         onCrs: (crs) => {
@@ -148,7 +154,7 @@ export class BrimSpillPath extends Card {
   #typedPlace(text: string): void {
     const { session, state, voice } = this;
     if (!session || !state?.surveyed) return;
-    const view = state.map?.getView().getProjection() ?? null;
+    const view = state.layers?.problem ? null : (state.map?.getView().getProjection() ?? null);
     const asked = placeAsked(text, this.crs, view, state.surveyed.view);
     if (asked) this.#ask(asked);
     else {

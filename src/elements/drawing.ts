@@ -29,12 +29,21 @@ export function drawOn(map: OlMap, session: Session): () => void {
       layers.setPalette(paletteOf(tone));
       pointedLeg.setStyle(pointedStyle(paletteOf(tone)));
     }
-    if (has('surveyed')) layers.setSurvey(surveyed?.view);
+    if (has('surveyed')) {
+      layers.setSurvey(surveyed?.view);
+      tellProblem();
+    }
     if (has('ponds') && ponds) layers.setPonds(ponds.outlines, ponds.pourPoints);
     if (has('selected') || has('ponds')) layers.select(selected);
     if (has('path')) layers.setPath(path?.lines);
     if (has('path') || has('leg')) drawLeg();
     map.getTargetElement()?.style.setProperty('cursor', session.state.picking ? 'crosshair' : '');
+  };
+  let problemTold: number | undefined;
+  const tellProblem = (): void => {
+    const { problem } = layers;
+    if (problemTold !== undefined) session.forgetFault(problemTold);
+    problemTold = problem ? session.fault(problem.code, problem.message) : undefined;
   };
   const drawLeg = (): void => {
     const source = pointedLeg.getSource();
@@ -44,7 +53,10 @@ export function drawOn(map: OlMap, session: Session): () => void {
     }
   };
   const onChange = (event: Event): void => draw((key) => Reflect.get(event, 'keys').has(key));
-  const onView = (): void => drawLeg();
+  const onView = (): void => {
+    tellProblem();
+    drawLeg();
+  };
   draw(() => true);
   session.addEventListener('change', onChange);
   map.on('change:view', onView);

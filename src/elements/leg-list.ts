@@ -1,8 +1,9 @@
 import { css, html, nothing, type TemplateResult } from 'lit';
+import { footM } from './measures.ts';
 import type { Leg, TracedPath } from './traced-path.ts';
 import type { Voice } from './voice.ts';
 
-/** Legs shown before more are asked for. */
+/** Legs shown before more are asked for; paper has them all. */
 const fewLegs = 12;
 
 export const legListLook = css`
@@ -64,6 +65,19 @@ export const legListLook = css`
   .leg svg {
     display: block;
   }
+  @media screen {
+    .later {
+      display: none;
+    }
+  }
+  @media print {
+    button.leg {
+      display: flex;
+    }
+    .legs li {
+      break-inside: avoid;
+    }
+  }
   .stroke {
     stroke: var(--accent);
     stroke-width: 3;
@@ -87,23 +101,25 @@ interface LegList {
 export function legList(voice: Voice, list: LegList): TemplateResult {
   const { say, measures } = voice;
   const { path, showsAll, onAll, onClear } = list;
-  const shown = showsAll ? path.legs : path.legs.slice(0, fewLegs);
+  const shown = showsAll ? path.legs.length : fewLegs;
   return html`
     <div part="legs" class="stack">
       <p class="lead">
         ${say('pathTotal', {
           length: measures.length(path.lengthM),
           drop: measures.elevation(path.dropM),
-          storage: measures.volume(path.storageM3),
+          storage: storage(voice, path.storageM3),
         })}
         ${say(path.endsAt === 'outlet' ? 'pathEndsOutlet' : 'pathEndsNoWay')}
       </p>
       <ol class="legs" aria-label=${say('legs')}>
-        ${shown.map((leg) => html`<li>${legLine(voice, leg, list)}</li>`)}
+        ${path.legs.map(
+          (leg, i) => html`<li class=${i < shown ? nothing : 'later'}>${legLine(voice, leg, list)}</li>`,
+        )}
       </ol>
       <div class="row screen-only">
         ${
-          shown.length < path.legs.length
+          shown < path.legs.length
             ? html`<button type="button" @click=${onAll}>${say('legMore', { count: path.legs.length })}</button>`
             : nothing
         }
@@ -113,7 +129,8 @@ export function legList(voice: Voice, list: LegList): TemplateResult {
   `;
 }
 
-function legLine({ say, measures }: Voice, leg: Leg, list: LegList): TemplateResult {
+function legLine(voice: Voice, leg: Leg, list: LegList): TemplateResult {
+  const { say, measures } = voice;
   const number = leg.pond === null ? null : list.numberOf(leg.pond);
   const way =
     leg.kind === 'pond'
@@ -123,7 +140,7 @@ function legLine({ say, measures }: Voice, leg: Leg, list: LegList): TemplateRes
       : say(leg.kind === 'culvert' ? 'legCulvert' : 'legLand');
   const change =
     leg.kind === 'pond'
-      ? say('legHolds', { storage: measures.volume(leg.storageM3) })
+      ? say('legHolds', { storage: storage(voice, leg.storageM3) })
       : leg.dropM === 0
         ? say('legLevel')
         : say('legDrop', { drop: measures.elevation(leg.dropM) });
@@ -143,6 +160,12 @@ function legLine({ say, measures }: Voice, leg: Leg, list: LegList): TemplateRes
       <span class="figures">${measures.length(leg.lengthM)}, ${change}</span>
     </button>
   `;
+}
+
+/** Less than what a puddle holds is told as that, since its figures would say more than the terrain does. */
+function storage({ say, measures }: Voice, m3: number): string {
+  const least = measures.system === 'us' ? 10 * footM ** 3 : 1;
+  return m3 > 0 && m3 < least ? say('lessThan', { value: measures.volume(least) }) : measures.volume(m3);
 }
 
 /** The line by which a leg is drawn on the map. */

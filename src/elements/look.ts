@@ -204,10 +204,28 @@ export const look = css`
     border-width: 2px;
   }
   @media print {
+    section.card {
+      break-inside: avoid;
+    }
     button,
-    input[type='file'],
+    input,
     .screen-only {
       display: none;
+    }
+    button.plain {
+      display: inline;
+      color: inherit;
+      text-decoration: none;
+      padding: 0;
+    }
+    /* What is chosen is worth a word on paper, the box to choose from is not. */
+    select {
+      appearance: none;
+      color: inherit;
+      background: none;
+      border: 0;
+      padding: 0;
+      min-height: 0;
     }
   }
 `;

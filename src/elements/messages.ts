@@ -158,6 +158,7 @@ const en = {
   legDrop: 'drops {drop}',
   legLevel: 'level',
   legHolds: 'holds {storage}',
+  lessThan: 'under {value}',
   legMore: 'Show all {count} legs',
   clearPath: 'Clear',
 

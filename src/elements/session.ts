@@ -85,6 +85,8 @@ export class Session extends EventTarget {
   readonly running: Running;
   #state: SessionState = nothing;
   #lastFault = 0;
+  /** Elements that list the path and can clear it. */
+  readonly pathLists = new Set<{ readonly isConnected: boolean }>();
 
   /** @param openEngine called when the first question is asked */
   constructor(openEngine: () => Promise<Engine>) {
@@ -98,11 +100,21 @@ export class Session extends EventTarget {
 
   put(news: Partial<SessionState>): void {
     const before = this.#state;
-    this.#state = { ...before, ...news };
-    const keys = (Object.keys(news) as (keyof SessionState)[]).filter(
+    const all = { ...news };
+    // Where nothing lists the path, it goes with the pond: it could not be cleared otherwise.
+    if (before.selected !== null && news.selected === null && !this.#hasPathList) {
+      all.path = null;
+      all.leg = null;
+    }
+    this.#state = { ...before, ...all };
+    const keys = (Object.keys(all) as (keyof SessionState)[]).filter(
       (key) => before[key] !== this.#state[key],
     );
     if (keys.length > 0) this.dispatchEvent(new SessionChange(new Set(keys)));
+  }
+
+  get #hasPathList(): boolean {
+    return [...this.pathLists].some(({ isConnected }) => isConnected);
   }
 
   /** Keeps an error for the status line; gives the number by which it is forgotten. */

@@ -57,6 +57,14 @@ export const statusLook = css`
     border-inline-start: 2px solid var(--accent);
     padding-inline-start: 0.5rem;
   }
+  @media print {
+    section.status {
+      position: static;
+    }
+    .caution {
+      break-inside: avoid;
+    }
+  }
 `;
 
 /** What runs, what went wrong, what was done last. */

@@ -4,7 +4,7 @@ import Fill from 'ol/style/Fill.js';
 import Stroke from 'ol/style/Stroke.js';
 import Style, { type StyleFunction } from 'ol/style/Style.js';
 import { arrowhead, dot } from './marks.ts';
-import { css } from './packed-colour.ts';
+import { css, type Rgb } from './packed-colour.ts';
 import type { Palette } from './palette.ts';
 
 /** Ponds smaller than this on the screen show no pour point and no link, CSS pixels. */
@@ -39,18 +39,45 @@ export function pourPointStyle(palette: Palette): StyleFunction {
   };
 }
 
-/** What is selected: a double shore and its pour point, larger. */
+/** What is selected: a line around the shore, so that a small pond is not covered, and its pour point, larger. */
 export function selectedStyle(palette: Palette): StyleFunction {
-  const shore = [
-    new Style({ stroke: new Stroke({ color: css(palette.halo), width: 6 }) }),
-    new Style({ stroke: new Stroke({ color: css(palette.accent), width: 3 }) }),
-  ];
-  const sill = new Style({ image: dot(palette, 5), zIndex: 2 });
+  const shore = [band(palette.halo, 7), band(palette.accent, 5), band(palette.halo, 2)];
+  const sill = new Style({ image: dot(palette, 4), zIndex: 2 });
   return (feature, resolution) => {
     const turn: number | null | undefined = feature.get('bearing');
     if (turn === undefined) return shore;
-    return turn === null ? sill : [arrow(feature as Feature<Point>, palette, turn, resolution, 1.4), sill];
+    return turn === null ? sill : [arrow(feature as Feature<Point>, palette, turn, resolution, 1.15), sill];
   };
+}
+
+/** Far beyond any canvas, pixels. */
+const farPx = 1e5;
+
+/** A stroke of which only the outer half is painted: what reaches inwards is clipped away. */
+function band(colour: Rgb, width: number): Style {
+  return new Style({
+    renderer: (coordinates, { context, pixelRatio }) => {
+      const rings = (coordinates as number[][][][]).flat();
+      const trace = (): void => {
+        for (const ring of rings) {
+          for (const [i, [x, y]] of ring.entries()) i === 0 ? context.moveTo(x, y) : context.lineTo(x, y);
+          context.closePath();
+        }
+      };
+      context.save();
+      context.beginPath();
+      context.rect(-farPx, -farPx, 2 * farPx, 2 * farPx);
+      trace();
+      context.clip('evenodd');
+      context.beginPath();
+      trace();
+      context.strokeStyle = css(colour);
+      context.lineWidth = width * pixelRatio;
+      context.lineJoin = 'round';
+      context.stroke();
+      context.restore();
+    },
+  });
 }
 
 function arrow(

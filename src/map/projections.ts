@@ -73,6 +73,17 @@ export function viewToTerrain(view: Projection, crs: Crs): Transform {
   };
 }
 
+/** Why nothing of a terrain can be shown in a view's projection; null when it can. */
+export function hasNoWay(view: Projection, crs: Crs): OverbrimError | null {
+  try {
+    viewToTerrain(view, crs);
+    return null;
+  } catch (error) {
+    if (error instanceof OverbrimError) return error;
+    throw error;
+  }
+}
+
 const nowhere: Point = [Number.NaN, Number.NaN];
 
 function transformOf(from: string, to: string): TransformFunction {

@@ -7,6 +7,7 @@ import LayerGroup from 'ol/layer/Group.js';
 import VectorLayer from 'ol/layer/Vector.js';
 import type OlMap from 'ol/Map.js';
 import VectorSource from 'ol/source/Vector.js';
+import type { OverbrimError } from '../core/error.ts';
 import { checkMap } from './check-map.ts';
 import { OutlineLayers } from './outline-layers.ts';
 import { linkLine, overflowBearing } from './overflow.ts';
@@ -15,7 +16,7 @@ import { pathStyle } from './path-styles.ts';
 import { PixelCells } from './pixel-cells.ts';
 import { type PondOnView, pondsOnView } from './pond-features.ts';
 import { linkStyle, outlineStyle, pourPointStyle, selectedStyle } from './pond-styles.ts';
-import { terrainProjection } from './projections.ts';
+import { hasNoWay, terrainProjection } from './projections.ts';
 import { type ReadOut, readOut } from './read-out.ts';
 import { ReliefLayer } from './relief-layer.ts';
 import type { SurveyView } from './survey-view.ts';
@@ -39,6 +40,8 @@ export class SurveyLayers {
   #ponds: Map<string, PondOnView> = new Map();
   #drawn: { ponds?: [FeatureCollection, FeatureCollection]; path?: FeatureCollection } = {};
   #selected: string | null = null;
+  #cells: PixelCells | undefined;
+  #problem: OverbrimError | null = null;
   readonly #onView = (): void => this.#draw();
 
   /** @throws OverbrimError `bad-input` when the map is none of our OpenLayers. */
@@ -60,13 +63,16 @@ export class SurveyLayers {
     return this.#ponds;
   }
 
+  /** Why nothing is shown of the survey: no way is known from the view's projection; null when there is one. */
+  get problem(): OverbrimError | null {
+    return this.#problem;
+  }
+
   /** Shows a survey's relief and water, and forgets what was drawn of another. */
   setSurvey(survey: SurveyView | undefined): void {
     this.#survey = survey;
     if (survey) terrainProjection(survey.georeference);
-    const cells = survey && new PixelCells(survey);
-    this.relief.setPixelCells(cells);
-    this.wet.setPixelCells(cells);
+    this.#cells = survey && new PixelCells(survey);
     this.#drawn = {};
     this.#selected = null;
     this.#draw();
@@ -103,7 +109,7 @@ export class SurveyLayers {
 
   /** What the grid says at a coordinate of the view; null beside the terrain or without one. */
   readOut(coordinate: readonly number[]): ReadOut | null {
-    if (!this.#survey) return null;
+    if (!this.#survey || this.#problem) return null;
     return readOut(this.#survey, this.#projection(), coordinate, this.wet.levelM);
   }
 
@@ -119,7 +125,14 @@ export class SurveyLayers {
   }
 
   #draw(): void {
-    const [ponds, pourPoints] = this.#drawn.ponds ?? [];
+    const survey = this.#survey;
+    this.#problem = survey ? hasNoWay(this.#projection(), survey.georeference.crs) : null;
+    const cells = this.#problem ? undefined : this.#cells;
+    if (this.relief.pixelCells !== cells) {
+      this.relief.setPixelCells(cells);
+      this.wet.setPixelCells(cells);
+    }
+    const [ponds, pourPoints] = (this.#problem ? undefined : this.#drawn.ponds) ?? [];
     this.#ponds = ponds && pourPoints ? pondsOnView(ponds, pourPoints, this.#projection()) : new Map();
     const all = [...this.#ponds.values()];
     this.outlines.show(all.map(({ outline }) => outline));
@@ -135,9 +148,13 @@ export class SurveyLayers {
   }
 
   #drawPath(): void {
-    const { path } = this.#drawn;
+    const path = this.#problem ? undefined : this.#drawn.path;
+    if (!path) {
+      show(this.path, []);
+      return;
+    }
     const format = new GeoJSON({ dataProjection: 'EPSG:4326', featureProjection: this.#projection() });
-    show(this.path, path ? format.readFeatures(path) : []);
+    show(this.path, format.readFeatures(path));
   }
 }
 

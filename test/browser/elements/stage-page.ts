@@ -1,6 +1,7 @@
 import '../../../src/elements/index.ts';
 import VectorLayer from 'ol/layer/Vector.js';
 import OlMap from 'ol/Map.js';
+import Projection from 'ol/proj/Projection.js';
 import { fromLonLat, toLonLat } from 'ol/proj.js';
 import View from 'ol/View.js';
 import type { SessionState } from '../../../src/elements/session.ts';
@@ -45,6 +46,16 @@ const elementsStage = {
     const { left, top } = mapOnPage();
     const place = townMap.getCoordinateFromPixel([x - left, y - top]) ?? [];
     return { view: place.join(' '), lonLat: toLonLat(place).join(', ') };
+  },
+
+  /** A view in a plane of its own, as pages have it for plans without a CRS. */
+  useUnknownProjection(): void {
+    const projection = new Projection({ code: 'LOCAL-GRID', units: 'm', extent: [0, 0, 1e6, 1e6] });
+    townMap.setView(new View({ projection, center: [5e5, 5e5], zoom: 4 }));
+  },
+
+  useMercator(): void {
+    townMap.setView(new View({ center: fromLonLat([0, 0]), zoom: 2 }));
   },
 
   path: (): string => JSON.stringify(elementsStage.state().path?.lines),
