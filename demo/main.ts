@@ -2,6 +2,7 @@ import 'overbrim/elements';
 import { defaults } from 'ol/control/defaults.js';
 import ScaleLine from 'ol/control/ScaleLine.js';
 import OlMap from 'ol/Map.js';
+import { printWhole } from './print-whole.ts';
 import { townLayers } from './town-layers.ts';
 import { townView } from './town-view.ts';
 
@@ -14,3 +15,4 @@ const map = new OlMap({
 
 const host = document.querySelector('brim-host');
 if (host) host.map = map;
+printWhole(map);
