@@ -90,6 +90,8 @@ export function atRest(page: Page): Promise<void> {
 
 /** Clicks the map at the middle of a cell. */
 export async function clickCell(page: Page, cell: Cell): Promise<void> {
+  // A line that comes or goes beside the map changes its size, and with it where the cell lies on the page.
+  await atRest(page);
   const own = middleOf(cell);
   const places = { own, mercator: inMercator.forward(inTown.inverse(own)) };
   const [x, y] = await page.evaluate(({ own, mercator }) => {
