@@ -174,20 +174,7 @@ describe('the town by modules', () => {
 
   it('does the main job by keyboard alone', async () => {
     const page = await openTown();
-    const focused = () =>
-      page.evaluate(() => {
-        let at = document.activeElement;
-        while (at?.shadowRoot?.activeElement) at = at.shadowRoot.activeElement;
-        const name = at?.getAttribute('aria-label') ?? at?.textContent ?? '';
-        return name.replace(/\s+/g, ' ').trim();
-      });
-    const tabTo = async (name: RegExp): Promise<void> => {
-      for (let presses = 0; presses < 25; presses++) {
-        await page.keyboard.press('Tab');
-        if (name.test(await focused())) return;
-      }
-      throw new Error(`Tab does not reach ${name}; it is at "${await focused()}".`);
-    };
+    const { focused, tabTo } = keysOn(page);
     await page.keyboard.press('Tab');
     expect(await focused()).toBe('Skip the map, go to the ponds');
     await page.keyboard.press('Enter');
@@ -200,6 +187,13 @@ describe('the town by modules', () => {
     await page.keyboard.press('Enter');
     await page.getByRole('list', { name: 'Legs, from the start' }).waitFor();
     await tabTo(/over land|through/);
+  });
+
+  it('leads to the ponds by the Tab key alone, past the skip link', async () => {
+    const { focused, tabTo } = keysOn(await openTown());
+    await tabTo(/^Map of Brimsallow/);
+    await tabTo(/^Pond 1 /);
+    expect(await focused()).toMatch(/^Pond 1 Holds/);
   });
 
   it.each(['light', 'dark'] as const)('has no accessibility fault in the %s', async (colorScheme) => {
@@ -220,6 +214,25 @@ describe('the town by modules', () => {
     expect(await sidewaysPx(page)).toBe(0);
   });
 });
+
+/** What has the focus, by its name, and a way to reach something with the Tab key. */
+function keysOn(page: Page) {
+  const focused = () =>
+    page.evaluate(() => {
+      let at = document.activeElement;
+      while (at?.shadowRoot?.activeElement) at = at.shadowRoot.activeElement;
+      const name = at?.getAttribute('aria-label') ?? at?.textContent ?? '';
+      return name.replace(/\s+/g, ' ').trim();
+    });
+  const tabTo = async (name: RegExp): Promise<void> => {
+    for (let presses = 0; presses < 25; presses++) {
+      await page.keyboard.press('Tab');
+      if (name.test(await focused())) return;
+    }
+    throw new Error(`Tab does not reach ${name}; it is at "${await focused()}".`);
+  };
+  return { focused, tabTo };
+}
 
 /** Each vertex is the middle of a cell, water never runs uphill over land, and the way ends on the rim. */
 async function checkPath(legs: { kind: string; cells: Cell[] }[], weir: Cell): Promise<void> {
