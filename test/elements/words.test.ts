@@ -24,6 +24,13 @@ describe('words', () => {
     expect(servedLanguage('tlh')).toBe('en');
   });
 
+  it('names the language that is served, and writes numbers by the rules of the one asked for', () => {
+    const voice = new Voice('de-DE');
+    expect(voice.lang).toBe('en');
+    expect(voice.measures.lang).toBe('de-DE');
+    expect(voice.say('pageOf', { from: 1, to: 8, count: 3377 })).toBe('1–8 of 3.377');
+  });
+
   it('says every message somewhere', () => {
     const folder = new URL('../../src/elements/', import.meta.url);
     const sources = readdirSync(folder)
