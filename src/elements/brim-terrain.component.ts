@@ -39,6 +39,7 @@ export class BrimTerrain extends Card {
     neighbours: { type: String },
     withoutFit: { type: Boolean, attribute: 'without-fit' },
     isOver: { state: true },
+    unanswered: { state: true },
   };
 
   declare src: string | null;
@@ -49,6 +50,8 @@ export class BrimTerrain extends Card {
   declare withoutFit: boolean;
   /** Files hover over the card. */
   declare protected isOver: boolean;
+  /** What was asked for last and gave no terrain; to ask again. */
+  declare protected unanswered: Asked | null;
   #isAsked = false;
 
   constructor() {
@@ -60,6 +63,7 @@ export class BrimTerrain extends Card {
     this.neighbours = null;
     this.withoutFit = false;
     this.isOver = false;
+    this.unanswered = null;
   }
 
   /** Surveys files of the user, as one mosaic when there are several. */
@@ -85,6 +89,7 @@ export class BrimTerrain extends Card {
     super.sessionChanged(session, change);
     if (!change) this.#isAsked = false;
     const { surveyed, layers } = session.state;
+    if (change?.keys.has('withoutUnit') && session.state.withoutUnit) void this.#showQuestion();
     if (!surveyed || !change) return;
     if (change.keys.has('surveyed')) this.dispatchEvent(new BrimTerrainEvent(surveyed));
     if ((change.keys.has('surveyed') || change.keys.has('layers')) && layers && !this.withoutFit) {
@@ -103,6 +108,12 @@ export class BrimTerrain extends Card {
     if (terrain.length > 0) void this.#survey(terrain, terrain.map(lastPart));
   }
 
+  /** The question is brought into view, since nothing goes on without its answer. */
+  async #showQuestion(): Promise<void> {
+    await this.updateComplete;
+    this.renderRoot.querySelector('.unit-question')?.scrollIntoView({ block: 'nearest' });
+  }
+
   protected override render(): unknown {
     const { voice } = this;
     const surveyed = this.state?.surveyed ?? null;
@@ -116,19 +127,28 @@ export class BrimTerrain extends Card {
       onFiles: (files) => void this.open(files),
     });
     const ask = (inputs: TerrainInputs, names: readonly string[]) => (unit: string) => {
-      const { session } = this;
-      if (session) void surveyTerrain(session, { ...inputs, verticalUnit: unit }, names);
+      void this.#ask({ ...inputs, verticalUnit: unit }, names);
     };
     return this.card(
       voice.say(surveyed ? 'terrainLoaded' : 'terrainHeading'),
       html`
-        ${withoutUnit ? unitQuestion(voice, withoutUnit.names, ask(withoutUnit.inputs, withoutUnit.names)) : nothing}
+        ${
+          withoutUnit
+            ? html`<div class="unit-question">
+                ${unitQuestion(voice, withoutUnit.names, ask(withoutUnit.inputs, withoutUnit.names))}
+              </div>`
+            : nothing
+        }
+        ${surveyed || withoutUnit || !this.unanswered ? nothing : this.#again(this.unanswered)}
         ${
           surveyed
             ? terrainFacts(
                 voice,
                 surveyed,
-                unitChoice(voice, surveyed.view.verticalUnit, ask(surveyed.inputs, surveyed.names)),
+                // Where no unit was given, the file names its own, and another would be refused.
+                surveyed.inputs.verticalUnit === undefined
+                  ? html`${voice.say(unitNames[surveyed.view.verticalUnit])}`
+                  : unitChoice(voice, surveyed.view.verticalUnit, ask(surveyed.inputs, surveyed.names)),
               )
             : nothing
         }
@@ -137,11 +157,25 @@ export class BrimTerrain extends Card {
     );
   }
 
-  #survey(terrain: readonly string[], names: readonly string[]): Promise<void> {
+  #again({ inputs, names }: Asked): unknown {
+    return html`
+      <button type="button" @click=${() => void this.#ask(inputs, names)}>
+        ${this.voice.say('askAgain', { name: names.join(', ') })}
+      </button>
+    `;
+  }
+
+  async #ask(inputs: TerrainInputs, names: readonly string[]): Promise<void> {
     const { session } = this;
-    if (!session) return Promise.resolve();
-    return surveyTerrain(
-      session,
+    if (!session) return;
+    this.unanswered = null;
+    await surveyTerrain(session, inputs, names);
+    // Another question may have taken the place of this one, and runs.
+    if (!session.running.jobs.some(({ kind }) => kind === 'terrain')) this.unanswered = { inputs, names };
+  }
+
+  #survey(terrain: readonly string[], names: readonly string[]): Promise<void> {
+    return this.#ask(
       {
         terrain,
         ...(this.verticalUnit === null ? {} : { verticalUnit: this.verticalUnit }),
@@ -153,6 +187,13 @@ export class BrimTerrain extends Card {
     );
   }
 }
+
+interface Asked {
+  readonly inputs: TerrainInputs;
+  readonly names: readonly string[];
+}
+
+const unitNames = { m: 'unitM', ft: 'unitFt', 'us-ft': 'unitUsFt' } as const;
 
 /** What is no address stays as it is; the reader then says so in words. */
 function absolute(address: string): string {

@@ -47,6 +47,7 @@ const en = {
   elapsedOf: '{elapsed} of about {expected}',
   cancelJob: 'Cancel: {title}',
   wasCancelled: '{title} was cancelled. What was there before is still there.',
+  wasCancelledFirst: '{title} was cancelled. Nothing was there before, so nothing is shown yet.',
   closeFault: 'Close this message',
 
   // brim-terrain.
@@ -78,6 +79,10 @@ const en = {
   factNoVoids: 'none',
   factVoidCells: '{count} cells, {share}',
   notesTitle: 'Notes',
+  askAgain: 'Load {name} again',
+  unitAnnounced: 'In which unit are the elevations of {name}? Answer in the card of the terrain.',
+  otherUnit:
+    'The file itself says in which unit its elevations are, and another unit was given for it; leave that out, or mend the file.',
   terrainSurveyed: 'Terrain surveyed: {columns} × {rows} cells.',
 
   // brim-pour-points.

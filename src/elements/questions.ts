@@ -6,6 +6,7 @@ import type { QuestionKind } from './running.ts';
 import type { Session, TerrainInputs } from './session.ts';
 import { tracedPath } from './traced-path.ts';
 import { Voice } from './voice.ts';
+import { pageSentence } from './words.ts';
 
 /** Least sizes of ponds to show, in metres, square and cubic metres. */
 export interface LeastSizes {
@@ -23,21 +24,24 @@ export const jobTitles: Readonly<Record<QuestionKind, MessageKey>> = {
 
 /**
  * Surveys a terrain. Until that has ended well, the terrain that was there stays; then all answers about it go.
- * Without a vertical unit the state `withoutUnit` holds the question.
+ * Without a vertical unit the state `withoutUnit` holds the question until a terrain is surveyed.
  */
 export function surveyTerrain(
   session: Session,
   inputs: TerrainInputs,
   names: readonly string[],
 ): Promise<void> {
-  session.put({ withoutUnit: null });
   return asked(session, 'terrain', async () => {
     try {
       const { view, notes } = await session.running.ask('terrain', (engine, tell) =>
         engine.view(inputs, tell),
       );
       session.running.dismiss('ponds', 'path');
+      // What went wrong with the terrain before is no news of this one.
+      forget(session, 'ponds');
+      forget(session, 'path');
       session.put({
+        withoutUnit: null,
         surveyed: { inputs, names, view, notes },
         ponds: null,
         selected: null,
@@ -47,7 +51,8 @@ export function surveyTerrain(
       });
     } catch (error) {
       if (codeOf(error) !== 'unit-missing') throw error;
-      session.put({ withoutUnit: { inputs, names } });
+      const said = voiceOf(session).say('unitAnnounced', { name: names.join(', ') });
+      session.put({ withoutUnit: { inputs, names }, said });
     }
   });
 }
@@ -104,16 +109,38 @@ function voiceOf({ state }: Session): Voice {
   return new Voice(state.lang, state.units);
 }
 
+/** Numbers of the faults that questions ended with, of each kind the last. */
+const faults = new WeakMap<Session, Map<QuestionKind, number>>();
+
+function forget(session: Session, kind: QuestionKind): void {
+  const id = faults.get(session)?.get(kind);
+  if (id === undefined) return;
+  faults.get(session)?.delete(kind);
+  session.forgetFault(id);
+}
+
+/** Keeps why a question has no answer until one of its kind is asked again. */
+export function refuse(session: Session, kind: QuestionKind, code: string, message: string): void {
+  forget(session, kind);
+  const ofSession = faults.get(session) ?? new Map<QuestionKind, number>();
+  faults.set(session, ofSession);
+  ofSession.set(kind, session.fault(code, message));
+}
+
 /** Tells what goes wrong; what was dismissed for a newer question of its kind is no news. */
 async function asked(session: Session, kind: QuestionKind, ask: () => Promise<void>): Promise<void> {
+  forget(session, kind);
   try {
     await ask();
   } catch (error) {
     if (codeOf(error) !== 'cancelled') {
-      session.fault(codeOf(error), error instanceof Error ? error.message : String(error));
+      const message = error instanceof Error ? error.message : String(error);
+      refuse(session, kind, codeOf(error), pageSentence(session.state.lang, message));
     } else if (!session.running.jobs.some((job) => job.kind === kind)) {
       const voice = voiceOf(session);
-      session.put({ said: voice.say('wasCancelled', { title: voice.say(jobTitles[kind]) }) });
+      const isFirst = kind === 'terrain' && session.state.surveyed === null;
+      const key = isFirst ? 'wasCancelledFirst' : 'wasCancelled';
+      session.put({ said: voice.say(key, { title: voice.say(jobTitles[kind]) }) });
     }
   }
 }

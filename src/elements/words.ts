@@ -23,6 +23,19 @@ export function words(tag: string, key: MessageKey, values: Values = {}): string
   });
 }
 
+/**
+ * What a page says of an error. Sentences are made for every edge of the project; options of the command line and names
+ * of inputs mean nothing to a reader of a page.
+ */
+export function pageSentence(tag: string, message: string): string {
+  if (/--vertical-unit (m|ft|us-ft) was given/.test(message)) return words(tag, 'otherUnit');
+  return message
+    .replace(/ \(--[a-z-]+( [a-z]+)?\)/g, '')
+    .replace(/(,? (such as|with|give)) --[a-z-]+( [a-z|-]+)?/g, '')
+    .replace(/([Tt])he input "crs"/g, '$1he CRS')
+    .replace(/The input "(\w+)"/g, '"$1"');
+}
+
 /** The tag for numbers and dates; one that `Intl` does not take counts as English. */
 export function numberTag(tag: string): string {
   try {

@@ -71,6 +71,47 @@ describe('surveyTerrain', () => {
     await surveyTerrain(session, { terrain: ['x.tif'] }, ['x.tif']);
     expect(session.state.withoutUnit).toEqual({ inputs: { terrain: ['x.tif'] }, names: ['x.tif'] });
     expect(session.state.faults).toEqual([]);
+    expect(session.state.said).toBe(
+      'In which unit are the elevations of x.tif? Answer in the card of the terrain.',
+    );
+  });
+
+  it('keeps the question of the unit when the survey with its answer is cancelled', async () => {
+    const missing = engineWith(found, new OverbrimError('unit-missing', 'No unit.')).engine;
+    const engine = {
+      ...missing,
+      view: (inputs: Inputs) =>
+        inputs.verticalUnit === undefined
+          ? missing.view(inputs as never)
+          : new JobQueue().add('view', () => new Promise(() => {})),
+    } as unknown as Engine;
+    const session = new Session(async () => engine);
+    await surveyTerrain(session, { terrain: ['x.tif'] }, ['x.tif']);
+    const answered = surveyTerrain(session, { terrain: ['x.tif'], verticalUnit: 'm' }, ['x.tif']);
+    await new Promise((next) => setTimeout(next));
+    session.running.dismiss('terrain');
+    await answered;
+    expect(session.state.withoutUnit).toEqual({ inputs: { terrain: ['x.tif'] }, names: ['x.tif'] });
+    expect(session.state.said).toBe(
+      'Surveying the terrain was cancelled. Nothing was there before, so nothing is shown yet.',
+    );
+  });
+
+  it('takes a fault back when its kind is asked again, and only then', async () => {
+    const good = engineWith(found);
+    const bad = engineWith(found, new OverbrimError('unreadable', 'y.tif is no TIFF.'));
+    let engine = bad.engine;
+    const session = new Session(async () => ({
+      ...good.engine,
+      view: (...given: Parameters<Engine['view']>) => engine.view(...given),
+    }));
+    await surveyTerrain(session, { terrain: ['y.tif'] }, ['y.tif']);
+    session.fault('failed', 'Something else.');
+    await findPonds(session, { depthM: 0, areaM2: 0, capacityM3: 0 });
+    expect(session.state.faults).toMatchObject([{ message: 'y.tif is no TIFF.' }, { code: 'failed' }]);
+    engine = good.engine;
+    await surveyTerrain(session, { terrain: ['x.tif'] }, ['x.tif']);
+    expect(session.state.faults).toMatchObject([{ message: 'Something else.' }]);
   });
 
   it('keeps the terrain that was there when another cannot be read, and says why', async () => {

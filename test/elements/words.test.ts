@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { depthLabel } from '../../src/elements/depth-label.ts';
 import { messages } from '../../src/elements/messages.ts';
 import { Voice } from '../../src/elements/voice.ts';
-import { servedLanguage, words } from '../../src/elements/words.ts';
+import { pageSentence, servedLanguage, words } from '../../src/elements/words.ts';
 import { lightPalette } from '../../src/map/palette.ts';
 import { caution } from '../../src/processes/caution.ts';
 
@@ -29,6 +29,29 @@ describe('words', () => {
     expect(voice.lang).toBe('en');
     expect(voice.measures.lang).toBe('de-DE');
     expect(voice.say('pageOf', { from: 1, to: 8, count: 3377 })).toBe('1–8 of 3.377');
+  });
+
+  it('says errors without options of the command line', () => {
+    const sources = [
+      'raster/vertical',
+      'raster/reading-plan',
+      'raster/open-terrain',
+      'processes/typed-place',
+    ];
+    const written = sources.flatMap((name) => {
+      const text = readFileSync(new URL(`../../src/${name}.ts`, import.meta.url), 'utf8');
+      return text.match(/`[^`]*(?:--[a-z]|the input ")[^`]*`/g) ?? [];
+    });
+    // A unit that is missing is asked for and never told as an error.
+    const told = written.filter((text) => !text.includes('does not say in which unit'));
+    expect(told.length).toBeGreaterThan(5);
+    for (const text of told) {
+      const said = pageSentence('en', text.slice(1, -1).replace(/(--vertical-unit) \S+/, '$1 ft'));
+      expect(said).not.toMatch(/--|input "|\(\)|,\s*[.;]/);
+    }
+    expect(
+      pageSentence('en', 'At most 9 are read, so give an extent (--extent) or a budget (--cell-budget).'),
+    ).toBe('At most 9 are read, so give an extent or a budget.');
   });
 
   it('says every message somewhere', () => {

@@ -74,6 +74,48 @@ describe('the vertical unit', () => {
   });
 });
 
+describe('the unit on the page', () => {
+  it('is announced as missing, and the question is brought into view', async () => {
+    const page = await pageWith(`<div style="height: 3000px"></div>${hostWith(unit)}`);
+    const question = page.getByRole('group', { name: 'In which unit are the elevations?' });
+    await question.waitFor();
+    const said = page.getByText('In which unit are the elevations of olinda.tif?');
+    await said.waitFor();
+    const isHeard = await said.evaluate((at) => at.closest('[role=status], [aria-live=polite]') !== null);
+    expect(isHeard).toBe(true);
+    await expect
+      .poll(() => question.evaluate((at) => at.getBoundingClientRect().top < window.innerHeight))
+      .toBe(true);
+  });
+
+  it('is plain text where the file names it', async () => {
+    const page = await pageWith(hostWith('<brim-terrain src="town.tif"></brim-terrain>'));
+    const facts = page.locator('brim-terrain dl');
+    await facts.waitFor();
+    expect(await facts.textContent()).toMatch(/Elevations in\s+metres/);
+    expect(await page.getByRole('combobox', { name: 'Elevations in' }).count()).toBe(0);
+  });
+});
+
+describe('a first load that is cancelled', () => {
+  it('says that nothing is there yet, and can be asked for again', async () => {
+    const page = await pageWith('');
+    let isSlow = true;
+    await page.route('**/slow.tif', (route) => {
+      if (!isSlow) return route.fulfill({ path: demoTown, contentType: 'image/tiff' });
+    });
+    await page.evaluate((html) => {
+      document.querySelector('main')?.insertAdjacentHTML('beforeend', html);
+    }, hostWith('<brim-terrain src="slow.tif"></brim-terrain>'));
+    await page.getByRole('button', { name: 'Cancel: Surveying the terrain' }).click();
+    await page.getByText('Nothing was there before, so nothing is shown yet.').waitFor();
+    isSlow = false;
+    await page.getByRole('button', { name: 'Load slow.tif again' }).click();
+    await page.locator('brim-terrain dl').waitFor();
+    expect(await page.getByRole('button', { name: 'Load slow.tif again' }).count()).toBe(0);
+  });
+});
+
 describe('files', () => {
   it('are taken from the chooser, several as one mosaic in the order of their names', async () => {
     const page = await pageWith(hostWith('<brim-terrain></brim-terrain>'));
@@ -223,7 +265,6 @@ describe('a host', () => {
     const page = await pageWith(
       `${hostWith('', 'id="one" lang="en"')}<brim-legend host="one"></brim-legend>`,
     );
-    const heading = page.locator('brim-legend section');
     const first = page.locator('brim-legend', { hasText: 'Choose a terrain first' });
     await first.waitFor();
     await page.evaluate(
@@ -231,9 +272,9 @@ describe('a host', () => {
         const next = document.createRange().createContextualFragment(html);
         document.getElementById('one')?.replaceWith(next);
       },
-      hostWith('', 'id="one" lang="fr"'),
+      hostWith('<brim-terrain src="olinda.tif" vertical-unit="m"></brim-terrain>', 'id="one" map="townMap"'),
     );
-    await expect.poll(() => heading.getAttribute('lang')).toBe('fr');
+    await page.locator('brim-legend', { hasText: 'Water, brimful' }).waitFor();
     await page.evaluate(() => document.getElementById('one')?.remove());
     await page.locator('brim-legend', { hasText: 'has no host' }).waitFor();
   });
