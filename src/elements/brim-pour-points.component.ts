@@ -3,16 +3,26 @@ import { Card } from './card.ts';
 import { BrimPondsEvent } from './events/brim-ponds-event.ts';
 import { BrimSelectEvent } from './events/brim-select-event.ts';
 import { fitExtent } from './fit-map.ts';
-import { leastSizes, leastSizesLook } from './least-sizes.ts';
+import { type LeastProblems, leastSizes, leastSizesLook } from './least-sizes.ts';
 import { MapEvents } from './map-events.ts';
 import { pitOf } from './pit-of.ts';
 import { pondDetail } from './pond-detail.ts';
 import { pageWith, pondList, pondListLook, pondsAPage } from './pond-list.ts';
 import type { Pond } from './ponds.ts';
-import { findPonds, type LeastSizes, tracePath } from './questions.ts';
+import { findPonds, type LeastSizes, refuse, tracePath } from './questions.ts';
 import type { Session, SessionChange } from './session.ts';
 
-const thresholds = ['minDepth', 'minArea', 'minCapacity'];
+const thresholds = [
+  ['minDepth', 'min-depth'],
+  ['minArea', 'min-area'],
+  ['minCapacity', 'min-capacity'],
+] as const;
+
+/** Without the attribute it is the default; what is no number stays none, to be told. */
+const leastOr = (standard: number) => ({
+  fromAttribute: (text: string | null) =>
+    text === null ? standard : text.trim() === '' ? Number.NaN : Number(text),
+});
 
 /**
  * Finds the ponds of the terrain, lists them, and shows of the selected one where and at which level it overflows and
@@ -34,16 +44,18 @@ const thresholds = ['minDepth', 'minArea', 'minCapacity'];
 export class BrimPourPoints extends Card {
   static override styles = [...Card.looks, leastSizesLook, pondListLook];
   static override properties: PropertyDeclarations = {
-    minDepth: { type: Number, attribute: 'min-depth' },
-    minArea: { type: Number, attribute: 'min-area' },
-    minCapacity: { type: Number, attribute: 'min-capacity' },
+    minDepth: { attribute: 'min-depth', converter: leastOr(0.1) },
+    minArea: { attribute: 'min-area', converter: leastOr(0) },
+    minCapacity: { attribute: 'min-capacity', converter: leastOr(0) },
     page: { state: true },
+    problems: { state: true },
   };
 
   declare minDepth: number;
   declare minArea: number;
   declare minCapacity: number;
   declare protected page: number;
+  declare protected problems: LeastProblems;
   readonly #mapEvents = new MapEvents(this, { click: (event) => this.#clicked(event.coordinate) });
 
   constructor() {
@@ -52,6 +64,7 @@ export class BrimPourPoints extends Card {
     this.minArea = 0;
     this.minCapacity = 0;
     this.page = 0;
+    this.problems = {};
   }
 
   /** Selects a pond by its id, or none; false when a listener vetoed. */
@@ -78,7 +91,8 @@ export class BrimPourPoints extends Card {
   }
 
   protected override willUpdate(changed: PropertyValues): void {
-    if (this.hasUpdated && thresholds.some((name) => changed.has(name)) && this.state?.surveyed) this.#find();
+    if (this.hasUpdated && thresholds.some(([name]) => changed.has(name)) && this.state?.surveyed)
+      this.#find();
   }
 
   protected override render(): unknown {
@@ -94,10 +108,15 @@ export class BrimPourPoints extends Card {
     const { voice, state } = this;
     const { measures } = voice;
     const ponds = state?.ponds;
-    const filters = leastSizes(voice, this.#least(), (least) => {
-      this.minDepth = least.depthM;
-      this.minArea = least.areaM2;
-      this.minCapacity = least.capacityM3;
+    const filters = leastSizes(voice, {
+      least: this.#least(),
+      problems: this.problems,
+      onChange: (least, problems) => {
+        this.problems = problems;
+        this.minDepth = least.depthM;
+        this.minArea = least.areaM2;
+        this.minCapacity = least.capacityM3;
+      },
     });
     if (!ponds) return filters;
     if (ponds.all === 0) return html`<p>${voice.say('noPondsAtAll')}</p>`;
@@ -148,7 +167,17 @@ export class BrimPourPoints extends Card {
   }
 
   #find(): void {
-    if (this.session) void findPonds(this.session, this.#least());
+    const { session } = this;
+    if (!session) return;
+    const wrong = thresholds.find(([name]) => !(this[name] >= 0 && this[name] < Number.POSITIVE_INFINITY));
+    if (!wrong) {
+      void findPonds(session, this.#least());
+      return;
+    }
+    const [property, name] = wrong;
+    const value = Number.isNaN(this[property]) ? this.getAttribute(name) : null;
+    const values = { name, value: value ?? String(this[property]) };
+    refuse(session, 'ponds', 'bad-input', this.voice.say('badLeast', values));
   }
 
   #selectInList(id: string): void {

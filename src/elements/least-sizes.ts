@@ -1,6 +1,6 @@
-import { css, html, type TemplateResult } from 'lit';
-import { live } from 'lit/directives/live.js';
+import { css, html, nothing, type TemplateResult } from 'lit';
 import type { LeastSizes } from './questions.ts';
+import { fieldNumber, numberSigns, typedNumber } from './typed-number.ts';
 import type { Voice } from './voice.ts';
 
 export const leastSizesLook = css`
@@ -32,13 +32,19 @@ const fields = [
   { name: 'capacityM3', size: 'capacity', label: 'leastCapacity' },
 ] as const;
 
-/** Number fields for least sizes, in the units of the reader. */
-export function leastSizes(
-  voice: Voice,
-  least: LeastSizes,
-  onChange: (least: LeastSizes) => void,
-): TemplateResult {
+/** What is wrong with what was typed, by size. */
+export type LeastProblems = Readonly<Partial<Record<keyof LeastSizes, string>>>;
+
+interface LeastForm {
+  readonly least: LeastSizes;
+  readonly problems: LeastProblems;
+  readonly onChange: (least: LeastSizes, problems: LeastProblems) => void;
+}
+
+/** Number fields for least sizes, in the units of the reader and the signs of the language. */
+export function leastSizes(voice: Voice, { least, problems, onChange }: LeastForm): TemplateResult {
   const { measures } = voice;
+  const { lang } = measures;
   return html`
     <fieldset class="screen-only">
       <legend>${voice.say('filters')}</legend>
@@ -47,13 +53,20 @@ export function leastSizes(
           const unit = measures.fieldUnits[size];
           const change = ({ currentTarget }: Event): void => {
             const input = currentTarget as HTMLInputElement;
-            const value = Number(input.value.trim() === '' ? '0' : input.value.replace(',', '.'));
-            const isFit = Number.isFinite(value) && value >= 0;
-            input.setCustomValidity(isFit ? '' : voice.say('badNumber', { value: input.value }));
-            input.setAttribute('aria-invalid', String(!isFit));
-            input.reportValidity();
-            if (isFit) onChange({ ...least, [name]: value * unit.size });
+            const value = input.value.trim() === '' ? 0 : typedNumber(input.value, lang);
+            if (value !== null) {
+              onChange({ ...least, [name]: value * unit.size }, { ...problems, [name]: '' });
+              return;
+            }
+            const values = {
+              value: input.value,
+              example: fieldNumber(0.1, lang),
+              decimal: numberSigns(lang).decimal,
+            };
+            onChange(least, { ...problems, [name]: voice.say('badNumber', values) });
           };
+          const problem = problems[name] ?? '';
+          const shown = least[name] / unit.size;
           return html`
             <label>
               <span class="label">${voice.say(label)}</span>
@@ -63,7 +76,9 @@ export function leastSizes(
                   inputmode="decimal"
                   autocomplete="off"
                   name=${size}
-                  .value=${live(String(Number((least[name] / unit.size).toPrecision(6))))}
+                  aria-invalid=${problem !== ''}
+                  aria-describedby=${problem === '' ? nothing : `problem-${size}`}
+                  .value=${Number.isFinite(shown) ? fieldNumber(shown, lang) : ''}
                   @change=${change}
                 />
                 <span class="small unit">${unit.symbol}</span>
@@ -72,6 +87,11 @@ export function leastSizes(
           `;
         })}
       </div>
+      ${fields.map(({ name, size }) =>
+        problems[name]
+          ? html`<p id="problem-${size}" role="alert" class="note">${problems[name]}</p>`
+          : nothing,
+      )}
     </fieldset>
   `;
 }

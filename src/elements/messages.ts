@@ -102,7 +102,10 @@ const en = {
   leastDepth: 'depth',
   leastArea: 'area',
   leastCapacity: 'capacity',
-  badNumber: '"{value}" is not a number of at least 0; type one such as 0.1.',
+  badNumber:
+    '"{value}" is not a number of at least 0; type one such as {example}, with "{decimal}" before decimals.',
+  badLeast:
+    'The attribute {name} is "{value}"; expected a number of at least 0, with a point before decimals, such as 0.1.',
   pondList: 'Ponds, largest first',
   columnNumber: 'Pond',
   columnCapacity: 'Holds',

@@ -97,6 +97,54 @@ describe('the unit on the page', () => {
   });
 });
 
+describe('least sizes', () => {
+  const town = (attributes = '', host = 'map="townMap"'): string =>
+    hostWith(
+      `<brim-terrain src="town.tif"></brim-terrain><brim-pour-points ${attributes}></brim-pour-points>`,
+      host,
+    );
+
+  it('stay as they are typed while the card is shown anew', async () => {
+    const page = await pageWith(town());
+    await page.locator('brim-pour-points .pond').first().waitFor();
+    const area = page.getByRole('textbox', { name: 'area' });
+    await area.pressSequentially('25');
+    await page.locator('brim-pour-points .pond').first().dispatchEvent('click');
+    await page.locator('brim-pour-points [part=detail]').waitFor();
+    expect(await area.inputValue()).toBe('250');
+  });
+
+  it('take groups as the card prints them, and say at the field what they do not take', async () => {
+    const page = await pageWith(town());
+    await page.locator('brim-pour-points .pond').first().waitFor();
+    const area = page.getByRole('textbox', { name: 'area' });
+    const least = () => page.evaluate(() => document.querySelector('brim-pour-points')?.minArea);
+    await area.fill('1,000');
+    await area.press('Tab');
+    await expect.poll(least).toBe(1000);
+    await area.fill('1,5');
+    await area.press('Tab');
+    await page.getByRole('alert').filter({ hasText: '"1,5" is not a number' }).waitFor();
+    expect(await area.getAttribute('aria-invalid')).toBe('true');
+    expect(await area.inputValue()).toBe('1,5');
+    expect(await least()).toBe(1000);
+    expect(await violations(page)).toEqual([]);
+    await area.fill('2');
+    await area.press('Tab');
+    await expect.poll(least).toBe(2);
+    expect(await area.getAttribute('aria-invalid')).toBe('false');
+  });
+
+  it('that are no number in the attribute are refused in words, until they are', async () => {
+    const page = await pageWith(town('min-depth="abc"'));
+    await fault(page).filter({ hasText: 'The attribute min-depth is "abc"' }).waitFor();
+    expect(await page.locator('brim-pour-points .pond').count()).toBe(0);
+    await page.evaluate(() => document.querySelector('brim-pour-points')?.setAttribute('min-depth', '0.2'));
+    await page.locator('brim-pour-points .pond').first().waitFor();
+    expect(await fault(page).count()).toBe(0);
+  });
+});
+
 describe('a first load that is cancelled', () => {
   it('says that nothing is there yet, and can be asked for again', async () => {
     const page = await pageWith('');
