@@ -9,7 +9,15 @@ import { pitOf } from './pit-of.ts';
 import { placeForm } from './place-form.ts';
 import { tracePath } from './questions.ts';
 import type { Session, SessionChange } from './session.ts';
-import { type AskedPlace, type PlaceCrs, placeAsked } from './typed-place.ts';
+import { pairText } from './typed-pair.ts';
+import {
+  type AskedPlace,
+  isOutside,
+  type PlaceCrs,
+  placeAsked,
+  placeDecimals,
+  placeExample,
+} from './typed-place.ts';
 
 /**
  * Traces the way of the overflow from a place picked on the map, from the selected pond, or from a typed coordinate,
@@ -50,10 +58,21 @@ export class BrimSpillPath extends Card {
     this.showsAll = false;
   }
 
+  override connectedCallback(): void {
+    super.connectedCallback();
+    document.addEventListener('keydown', this.#onKey);
+  }
+
   override disconnectedCallback(): void {
+    document.removeEventListener('keydown', this.#onKey);
     this.session?.put({ picking: false });
     super.disconnectedCallback();
   }
+
+  /** Escape ends the picking wherever the focus is: it is mostly on the map then. */
+  readonly #onKey = ({ key }: KeyboardEvent): void => {
+    if (key === 'Escape' && this.state?.picking) this.session?.put({ picking: false });
+  };
 
   override sessionChanged(session: Session, change: SessionChange | undefined): void {
     super.sessionChanged(session, change);
@@ -93,7 +112,6 @@ export class BrimSpillPath extends Card {
                 type="button"
                 aria-pressed=${picking}
                 @click=${() => session.put({ picking: !picking })}
-                @keydown=${(event: KeyboardEvent) => event.key === 'Escape' && session.put({ picking: false })}
               >
                 ${voice.say(picking ? 'picking' : 'pickOnMap')}
               </button>`
@@ -155,18 +173,18 @@ export class BrimSpillPath extends Card {
     const { session, state, voice } = this;
     if (!session || !state?.surveyed) return;
     const view = state.layers?.problem ? null : (state.map?.getView().getProjection() ?? null);
-    const asked = placeAsked(text, this.crs, view, state.surveyed.view);
-    if (asked) this.#ask(asked);
+    const asked = placeAsked(text, this.crs, view, state.surveyed.view, voice.measures.lang);
+    if (asked && !isOutside(asked, state.surveyed.view)) this.#ask(asked);
     else {
-      const example = this.crs === 'lonLat' ? '-123.4012, -48.8651' : '471234.5, 4587321.5';
-      this.problem = voice.say('badPlace', { value: text, example });
+      const example = placeExample(this.crs, view, state.surveyed.view, voice.measures.lang);
+      this.problem = voice.say(asked ? 'outsideTerrain' : 'badPlace', { value: text, example });
       this.#typed.value?.focus();
     }
   }
 
   #clicked(coordinate: readonly number[]): void {
     const { session, state } = this;
-    if (!session || !state?.picking || !state.layers) return;
+    if (!session || !state?.picking || !state.layers || !state.surveyed) return;
     const place = state.layers.readOut(coordinate);
     if (!place || place.groundM === null) {
       session.put({ said: this.voice.say('noCellHere') });
@@ -177,7 +195,9 @@ export class BrimSpillPath extends Card {
     const from = `${place.x},${place.y}`;
     this.crs = 'terrain';
     const field = this.#typed.value;
-    if (field) field.value = from;
+    if (field) {
+      field.value = pairText(place.x, place.y, placeDecimals(state.surveyed.view), this.voice.measures.lang);
+    }
     this.#ask({ from, crs: null });
   }
 

@@ -150,6 +150,7 @@ const en = {
   crsLonLat: 'longitude, latitude',
   trace: 'Trace',
   badPlace: '"{value}" is not a coordinate; type two numbers, x first, such as {example}.',
+  outsideTerrain: 'The place {value} lies outside the terrain; type one within, such as {example}, x first.',
   noCellHere: 'There is no ground at this place; pick one on the terrain.',
   pathTotal: '{length} long, falls {drop}, fills {storage} on its way',
   pathEndsOutlet: 'and leaves over an outlet.',

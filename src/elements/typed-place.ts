@@ -1,6 +1,10 @@
 import type Projection from 'ol/proj/Projection.js';
+import { transform } from 'ol/proj.js';
 import { viewToTerrain } from '../map/projections.ts';
+import { fromCrs84, toCrs84 } from '../raster/transform.ts';
+import { extentOf } from './fit-map.ts';
 import type { SurveyView } from './running.ts';
+import { pairText, typedPair } from './typed-pair.ts';
 
 /** What a typed coordinate may be in. */
 export type PlaceCrs = 'terrain' | 'view' | 'lonLat';
@@ -13,20 +17,54 @@ export interface AskedPlace {
   readonly crs: string | null;
 }
 
-const number = '[+-]?(?:\\d+\\.?\\d*|\\.\\d+)(?:[eE][+-]?\\d+)?';
-const pair = new RegExp(`^\\s*(${number})\\s*[,;\\s]\\s*(${number})\\s*$`);
-
 /** The place that was typed; null when it is no coordinate, or has no place in the terrain's CRS. */
 export function placeAsked(
   text: string,
   crs: PlaceCrs,
   view: Projection | null,
   survey: SurveyView,
+  tag = 'en',
 ): AskedPlace | null {
-  const match = pair.exec(text);
-  if (!match) return null;
-  if (crs === 'lonLat') return { from: `${match[1]},${match[2]}`, crs: 'EPSG:4326' };
-  if (crs === 'terrain' || view === null) return { from: `${match[1]},${match[2]}`, crs: null };
-  const [x, y] = viewToTerrain(view, survey.georeference.crs)(Number(match[1]), Number(match[2]));
+  const typed = typedPair(text, tag);
+  if (!typed) return null;
+  if (crs === 'lonLat') return { from: typed.join(','), crs: 'EPSG:4326' };
+  if (crs === 'terrain' || view === null) return { from: typed.join(','), crs: null };
+  const [x, y] = viewToTerrain(view, survey.georeference.crs)(Number(typed[0]), Number(typed[1]));
   return Number.isFinite(x) && Number.isFinite(y) ? { from: `${x},${y}`, crs: null } : null;
+}
+
+/** Whether a place is certainly off the terrain; a longitude may be full turns away. */
+export function isOutside({ from, crs }: AskedPlace, survey: SurveyView): boolean {
+  const own = survey.georeference.crs;
+  const [west, south, east, north] = extentOf(survey);
+  const typed = from.split(',').map(Number);
+  try {
+    const [x, y] = crs === null ? typed : fromCrs84(own)(typed[0], typed[1]);
+    const turns = own.kind === 'geographic' ? [-360, 0, 360] : [0];
+    return !(y >= south && y <= north && turns.some((turn) => x + turn >= west && x + turn <= east));
+  } catch {
+    return true;
+  }
+}
+
+/** Decimals that place a point to the centimetre: two of a length, seven of a degree. */
+export function placeDecimals({ georeference }: SurveyView): number {
+  return georeference.crs.kind === 'projected' ? 2 : 7;
+}
+
+/** The middle of the terrain, as an example of what may be typed. */
+export function placeExample(
+  crs: PlaceCrs,
+  view: Projection | null,
+  survey: SurveyView,
+  tag: string,
+): string {
+  const [west, south, east, north] = extentOf(survey);
+  const middle = [(west + east) / 2, (south + north) / 2];
+  const own = pairText(middle[0], middle[1], placeDecimals(survey), tag);
+  if (crs === 'terrain' || (crs === 'view' && view === null)) return own;
+  const [longitude, latitude] = toCrs84(survey.georeference.crs)(middle[0], middle[1]);
+  if (crs === 'lonLat' || view === null) return pairText(longitude, latitude, 7, tag);
+  const [x, y] = transform([longitude, latitude], 'EPSG:4326', view);
+  return pairText(x, y, view.getUnits() === 'degrees' ? 7 : 2, tag);
 }

@@ -2,7 +2,8 @@ import { get } from 'ol/proj.js';
 import { describe, expect, it } from 'vitest';
 import { pitOf } from '../../src/elements/pit-of.ts';
 import type { SurveyView } from '../../src/elements/running.ts';
-import { placeAsked } from '../../src/elements/typed-place.ts';
+import { pairText, typedPair } from '../../src/elements/typed-pair.ts';
+import { isOutside, placeAsked, placeExample } from '../../src/elements/typed-place.ts';
 
 /** Two columns by three rows of 10 m in UTM zone 31N; two ponds side by side. */
 const survey = {
@@ -51,6 +52,50 @@ describe('placeAsked', () => {
     expect(place?.crs).toBe(null);
     expect(east).toBeCloseTo(500_000, 6);
     expect(north).toBeCloseTo(0, 6);
+  });
+});
+
+// How the languages write decimals: Unicode CLDR, as Node carries it.
+describe('typedPair', () => {
+  it.each([
+    ['1,5 -2', '1.5', '-2'],
+    ['1,5; 2,25', '1.5', '2.25'],
+    ['3, 45', '3', '45'],
+    ['471234.5, 4587321.5', '471234.5', '4587321.5'],
+    ['471234.5,4587321.5', '471234.5', '4587321.5'],
+  ])('reads in German "%s"', (text, x, y) => {
+    expect(typedPair(text, 'de')).toEqual([x, y]);
+  });
+
+  it.each(['3,45', '1,5,2', '471.234,5', '48.123 9.5', '1,5'])('refuses in German "%s"', (text) => {
+    expect(typedPair(text, 'de')).toBe(null);
+  });
+
+  it.each(['en', 'de'])('reads in %s what is written', (tag) => {
+    expect(typedPair(pairText(48.123, -9.5, 7, tag), tag)).toEqual(['48.1230000', '-9.5000000']);
+  });
+});
+
+describe('a place and the terrain', () => {
+  it('is outside beyond its extent, in whatever it is given', () => {
+    const outside = (from: string, crs: string | null = null) => isOutside({ from, crs }, survey);
+    expect(outside('500000,5000000')).toBe(false);
+    expect(outside('500020,5000030')).toBe(false);
+    expect(outside('500020.1,5000030')).toBe(true);
+    expect(outside('5000015,500010')).toBe(true);
+    expect(outside('3,0', 'EPSG:4326')).toBe(true);
+  });
+
+  it('has an example in the middle that is inside, in whatever it is typed', () => {
+    const mercator = get('EPSG:3857');
+    expect(placeExample('terrain', null, survey, 'en')).toBe('500010.00, 5000015.00');
+    expect(placeExample('terrain', null, survey, 'de')).toBe('500010,00; 5000015,00');
+    for (const tag of ['en', 'de']) {
+      for (const crs of ['terrain', 'view', 'lonLat'] as const) {
+        const asked = placeAsked(placeExample(crs, mercator, survey, tag), crs, mercator, survey, tag);
+        expect(asked && isOutside(asked, survey)).toBe(false);
+      }
+    }
   });
 });
 

@@ -144,7 +144,7 @@ describe('the main job on the invented town', () => {
     expect(selected).toBe(0);
     const field = page.locator('brim-spill-path #place');
     const terrain = await field.inputValue();
-    expect(terrain).toMatch(/^47\d{4}\.\d+,458\d{4}/);
+    expect(terrain).toMatch(/^47\d{4}\.\d\d, 458\d{4}\.\d\d$/);
     const typed = await page.evaluate(([px, py]) => window.elementsStage.typedAt(px, py), [x, y]);
     for (const [crs, text] of [
       ['terrain', terrain],

@@ -145,6 +145,42 @@ describe('least sizes', () => {
   });
 });
 
+describe('a place to trace from', () => {
+  it('outside the terrain is told at the field, with an example that is inside', async () => {
+    const page = await pageWith(
+      hostWith('<brim-terrain src="town.tif"></brim-terrain><brim-spill-path></brim-spill-path>'),
+    );
+    const field = page.getByLabel('Or type a coordinate');
+    await field.fill('1, 2');
+    await field.press('Enter');
+    const problem = page.getByRole('alert').filter({ hasText: 'The place 1, 2 lies outside the terrain' });
+    await problem.waitFor();
+    expect(await field.getAttribute('aria-invalid')).toBe('true');
+    expect(await fault(page).count()).toBe(0);
+    const example = /such as (\S+, \S+), x first/.exec((await problem.textContent()) ?? '')?.[1] ?? '';
+    await field.fill(example);
+    await field.press('Enter');
+    await page.getByRole('list', { name: 'Legs, from the start' }).waitFor();
+    expect(await field.getAttribute('aria-invalid')).toBe('false');
+  });
+
+  it('is no longer picked after Escape, wherever the focus is', async () => {
+    const page = await pageWith(
+      hostWith('<brim-terrain src="town.tif"></brim-terrain><brim-spill-path></brim-spill-path>'),
+    );
+    await page.getByRole('button', { name: 'Pick on the map' }).click();
+    const picking = () => page.evaluate(() => window.elementsStage.state().picking);
+    expect(await picking()).toBe(true);
+    await page.evaluate(() => {
+      const map = document.getElementById('map');
+      if (map) map.tabIndex = 0;
+      map?.focus();
+    });
+    await page.keyboard.press('Escape');
+    expect(await picking()).toBe(false);
+  });
+});
+
 describe('a first load that is cancelled', () => {
   it('says that nothing is there yet, and can be asked for again', async () => {
     const page = await pageWith('');
