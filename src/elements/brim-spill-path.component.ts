@@ -9,13 +9,12 @@ import { pitOf } from './pit-of.ts';
 import { placeForm } from './place-form.ts';
 import { tracePath } from './questions.ts';
 import type { Session, SessionChange } from './session.ts';
-import { pairText } from './typed-pair.ts';
 import {
   type AskedPlace,
   isOutside,
   type PlaceCrs,
+  pickedText,
   placeAsked,
-  placeDecimals,
   placeExample,
 } from './typed-place.ts';
 
@@ -196,7 +195,7 @@ export class BrimSpillPath extends Card {
     this.crs = 'terrain';
     const field = this.#typed.value;
     if (field) {
-      field.value = pairText(place.x, place.y, placeDecimals(state.surveyed.view), this.voice.measures.lang);
+      field.value = pickedText(place.x, place.y, state.surveyed.view, this.voice.measures.lang);
     }
     this.#ask({ from, crs: null });
   }

@@ -48,8 +48,22 @@ export function isOutside({ from, crs }: AskedPlace, survey: SurveyView): boolea
 }
 
 /** Decimals that place a point to the centimetre: two of a length, seven of a degree. */
-export function placeDecimals({ georeference }: SurveyView): number {
+function placeDecimals({ georeference }: SurveyView): number {
   return georeference.crs.kind === 'projected' ? 2 : 7;
+}
+
+/** What a field shows for a picked place: the middle of its cell, since rounding the place could lead to the next one. */
+export function pickedText(x: number, y: number, survey: SurveyView, tag: string): string {
+  const { west, north, cellWidth, cellHeight } = survey.georeference;
+  const middle = (along: number, count: number): number => Math.min(Math.floor(along), count - 1) + 0.5;
+  const east = (x - west) / cellWidth;
+  const south = (north - y) / cellHeight;
+  return pairText(
+    west + middle(east, east <= survey.width ? survey.width : Number.POSITIVE_INFINITY) * cellWidth,
+    north - middle(south, survey.height) * cellHeight,
+    placeDecimals(survey),
+    tag,
+  );
 }
 
 /** The middle of the terrain, as an example of what may be typed. */

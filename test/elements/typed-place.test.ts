@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { pitOf } from '../../src/elements/pit-of.ts';
 import type { SurveyView } from '../../src/elements/running.ts';
 import { pairText, typedPair } from '../../src/elements/typed-pair.ts';
-import { isOutside, placeAsked, placeExample } from '../../src/elements/typed-place.ts';
+import { isOutside, pickedText, placeAsked, placeExample } from '../../src/elements/typed-place.ts';
 
 /** Two columns by three rows of 10 m in UTM zone 31N; two ponds side by side. */
 const survey = {
@@ -84,6 +84,13 @@ describe('a place and the terrain', () => {
     expect(outside('500020.1,5000030')).toBe(true);
     expect(outside('5000015,500010')).toBe(true);
     expect(outside('3,0', 'EPSG:4326')).toBe(true);
+  });
+
+  it('is written as the middle of the cell that was picked', () => {
+    expect(pickedText(500_009.9999, 5_000_020.0001, survey, 'en')).toBe('500005.00, 5000025.00');
+    expect(pickedText(500_010, 5_000_020, survey, 'en')).toBe('500015.00, 5000015.00');
+    // The outer south-east corner counts as inside.
+    expect(pickedText(500_020, 5_000_000, survey, 'de')).toBe('500015,00; 5000005,00');
   });
 
   it('has an example in the middle that is inside, in whatever it is typed', () => {
