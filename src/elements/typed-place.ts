@@ -1,7 +1,7 @@
 import type Projection from 'ol/proj/Projection.js';
 import { transform } from 'ol/proj.js';
+import { fromCrs84, toCrs84 } from '../map/index.ts';
 import { viewToTerrain } from '../map/projections.ts';
-import { fromCrs84, toCrs84 } from '../raster/transform.ts';
 import { extentOf } from './fit-map.ts';
 import type { SurveyView } from './running.ts';
 import { pairText, typedPair } from './typed-pair.ts';

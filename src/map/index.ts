@@ -1,3 +1,4 @@
+export { fromCrs84, toCrs84 } from '../raster/transform.ts';
 export { checkMap } from './check-map.ts';
 export { type Light, northWestLight } from './hillshade.ts';
 export type { Rgb } from './packed-colour.ts';
